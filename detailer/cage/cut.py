@@ -43,9 +43,11 @@ class Slice:
 
 @lru_cache(maxsize=256)
 def _union(outlines: tuple[tuple[tuple[float, float], ...], ...]) -> Any:
-    from shapely import Polygon, union_all
+    from shapely import union_all
+    from shapely.geometry import Polygon
 
-    return union_all([Polygon(outline) for outline in outlines])
+    polygon: Any = Polygon
+    return union_all([polygon(outline) for outline in outlines])
 
 
 def outline_at(prisms: tuple[Prism, ...], x: float) -> Any:
