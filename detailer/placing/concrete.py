@@ -20,7 +20,7 @@ def prisms_of(beam: Beam) -> tuple[Prism, ...]:
     beam : Beam
         The beam line.
     """
-    return tuple([*_spans(beam), *_supports(beam)])
+    return (*_spans(beam), *_supports(beam))
 
 
 def rests_of(beam: Beam) -> tuple[Rest, ...]:

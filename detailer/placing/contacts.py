@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import itertools
 from collections.abc import Iterator
 from math import hypot
 
@@ -39,7 +40,7 @@ def _touching(a: Strand, b: Strand) -> tuple[float, float] | None:
         if s.crank:
             edges |= {x for x in (s.aside_to, s.aside_to + s.crank) if x0 < x < x1}
     order = sorted(edges)
-    for low, high in zip(order, order[1:], strict=False):
+    for low, high in itertools.pairwise(order):
         if high - low < 1.0:
             continue
         ends = [hypot(a.at(x)[0] - b.at(x)[0], a.at(x)[1] - b.at(x)[1]) for x in (low, high)]

@@ -11,7 +11,7 @@ from detailer.model import Beam, LinkZone, Project, Span
 from detailer.placing.demand import Demand, area
 from detailer.placing.ends import Room, bend_leg, development, end_for, far_clear
 from detailer.placing.runs import Run, in_line
-from detailer.placing.strand import End
+from detailer.placing.strand import STRAIGHT, End
 from detailer.rules import is456, sp34
 from detailer.values import EndForm, Face
 
@@ -22,8 +22,8 @@ class Extent:
 
     x0: float
     x1: float
-    left: End = End()
-    right: End = End()
+    left: End = STRAIGHT
+    right: End = STRAIGHT
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -77,8 +77,9 @@ def span_extent(run: Run, around: Around) -> Extent:
 def _given(run: Run) -> tuple[float | None, float | None]:
     """Return signed distances past the faces that the engineer gave; None where open."""
     pairs = zip(run.chosen.stop, run.chosen.reach, strict=True)
-    left, right = (reach if reach is not None else None if stop is None else -stop
-                   for stop, reach in pairs)
+    left, right = (
+        reach if reach is not None else None if stop is None else -stop for stop, reach in pairs
+    )
     return left, right
 
 
@@ -170,7 +171,7 @@ def end_room(run: Run, around: Around, span: Span, side: int, support: int) -> R
     z = level[0] if level else 0.0
     if run.face is Face.TOP:
         drop = z + dia / 2 - (span.soffit + beam.cover.bottom) - OTHER_FACE
-        else:
+    else:
         drop = (span.top - beam.cover.top) - (z - dia / 2) - OTHER_FACE
     past = at.width - far_clear(beam, support) - around.setback[0 if side < 0 else 1]
     return Room(past_face=past, drop=drop)
@@ -227,7 +228,11 @@ def _interior(
     if want is None and rounded_out(need, step) <= room.past_face:
         return near + side * rounded_out(need, step), End()
     reach, end = end_for(
-        dia, need, room, want=want, step=project.practice.length_step,
+        dia,
+        need,
+        room,
+        want=want,
+        step=project.practice.length_step,
         least=_stress_share(run, around, span, side) * full,
     )
     return near + side * reach, end
@@ -298,7 +303,12 @@ def _pushed_out(
         x = origin + side * reach
         demand = around.demand
         stops = demand is None or demand.cut_allowed(
-            span, run.face, x, around.going_on, around.depth, max(run.dias),
+            span,
+            run.face,
+            x,
+            around.going_on,
+            around.depth,
+            max(run.dias),
             _zone_at(around.beam, span, x),
         )
         if stops and _holds_developing(around, span, run.face, x, -side, full):

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import itertools
 from collections.abc import Iterator
 
 from detailer.cage.bar import Bar
@@ -158,7 +159,7 @@ def spacer_bars(
 
 def _between_links(x: float, link_xs: tuple[float, ...], dia: float) -> float:
     """Return the nearest place half way between two links, or x where there are none near."""
-    gaps = [(a + b) / 2 for a, b in zip(link_xs, link_xs[1:], strict=False) if b - a > dia + 20]
+    gaps = [(a + b) / 2 for a, b in itertools.pairwise(link_xs) if b - a > dia + 20]
     near = min(gaps, key=lambda g: (abs(g - x), g), default=x)
     return near if abs(near - x) < 400 else x
 

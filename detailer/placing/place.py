@@ -79,7 +79,7 @@ def place(project: Project, beam: Beam, envelope: Envelope | None) -> Cage:
 
 
 def _strands(project: Project, beam: Beam, demand: Demand | None) -> tuple[Strand, ...]:
-    """Return the bars of top and bottom, lapped where the stock runs out, out of each other's way."""
+    """Return the bars of top and bottom, lapped where needed, out of each other's way."""
     seated = seat_all(project, beam, demand)
     raw = tuple(strands_of(project, seated))
     pieces: list[Strand] = []

@@ -18,6 +18,9 @@ class End:
     leg: float = 0.0
 
 
+STRAIGHT = End()
+
+
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Strand:
     """One bar along the beam. `x0` and `x1` are its outermost points. [mm]
@@ -35,8 +38,8 @@ class Strand:
     z: float
     x0: float
     x1: float
-    left: End = End()
-    right: End = End()
+    left: End = STRAIGHT
+    right: End = STRAIGHT
     corner: bool = False
     aside: tuple[float, float] = (0.0, 0.0)
     aside_to: float = 0.0
