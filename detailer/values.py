@@ -5,6 +5,12 @@ from __future__ import annotations
 from enum import Enum
 from typing import NamedTuple
 
+CAUTION = (
+    "Draft: not for construction until a licensed engineer has checked it "
+    "against the local codes and the design."
+)
+"""What every sheet, schedule and report says."""
+
 TOUCH = 0.5
 """Two bars penetrate when they overlap by more than this. [mm]"""
 
