@@ -52,15 +52,13 @@ def length_of(bar: Bar, step: float) -> Length:
     rule, exact = rule_length(parts, bar.dia), exact_length(bar)
     tolerance = max(5.0, 0.1 * bar.dia * bend_count(parts))
     agrees = abs(rule - exact) <= tolerance
-    note = (
-        "" if agrees else f"by the centre line; the rule, {_why(parts, bar.dia)}, gives {rule:.0f}"
-    )
+    differs = f"by the centre line; the rule gives {rule:.0f}{_why(parts, bar.dia)}"
     return Length(
         rule=rule,
         exact=exact,
         scheduled=is2502.round_up(rule if agrees else exact, step),
         tolerance=tolerance,
-        note=note,
+        note="" if agrees else differs,
     )
 
 
@@ -124,8 +122,8 @@ def _bend_term(bend: Bend, dia: float) -> float:
 
 
 def _why(parts: Parts, dia: float) -> str:
-    """Return why the rule does not fit a bar."""
-    radii = {round(bend.radius, 1) for bend in parts.bends}
-    if parts.family is not Family.BENT and any(abs(r - RULE_RADIUS * dia) > 0.5 for r in radii):
-        return f"made for an inner radius of {RULE_RADIUS * dia:.0f}"
-    return "made for bends that have room for their full radius"
+    """Return why the rule does not fit a link, in brackets; nothing for a bent bar."""
+    made_for = RULE_RADIUS * dia
+    if parts.family is Family.BENT or abs(parts.bends[0].radius - made_for) <= 0.5:
+        return ""
+    return f" (made for an inner radius of {made_for:.0f})"

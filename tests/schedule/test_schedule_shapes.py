@@ -61,7 +61,7 @@ def test_a_crank_has_its_rise() -> None:
     bar = main_bar("a", 0, 6000, cranks=(Crank(x=5000, dy=20),))
     code, dims = told(bar)
     assert code == "cranked"
-    assert dims == {"A": 880, "B": 122, "C": 5000, "R": 64, "H": 20} or dims["H"] == 20
+    assert dims == {"A": 880, "B": 122, "C": 5000, "R": 64, "H": 20}
     bent = main_bar("a", 0, 6000, left=250, cranks=(Crank(x=5000, dy=20),))
     code, dims = told(bent)
     assert code == "bend one end, cranked"
@@ -101,7 +101,7 @@ BARS = [
     main_bar("mixed", 0, 4000, left=250, right=64, hooks=(False, True)),
     main_bar("crank", 0, 4000, cranks=(Crank(x=3000, dz=16),)),
     main_bar("aside", 0, 4000, right=300, cranks=(Crank(x=700, dy=-16),)),
-    main_bar("twice", 0, 9000, left=200, right=300, cranks=(Crank(x=700, dy=16), Crank(x=8000, dy=-16))),
+    main_bar("twice", 0, 9000, left=200, cranks=(Crank(x=700, dy=16), Crank(x=8000, dy=-16))),
     main_bar("slanting", 0, 4000, right=300, cranks=(Crank(x=700, dy=10, dz=17),)),
     link("link", 170, 390),
     link("wide", 900, 200, dia=10),
