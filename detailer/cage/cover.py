@@ -1,0 +1,180 @@
+"""Cover as placed: distances from the surfaces of bars to the faces of the concrete."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from enum import Enum
+from itertools import pairwise
+from math import ceil
+from typing import Any
+
+import numpy as np
+import shapely
+
+from detailer.cage.bar import Bar, Cage
+from detailer.cage.clearance import steel_radius
+from detailer.cage.cut import outline_at
+from detailer.cage.line import Arc, centre_line
+from detailer.cage.pieces import Array
+
+_SHAPELY: Any = shapely  # its functions carry no types
+
+STEP = 25.0
+"""Straights are looked at in steps of this. [mm]"""
+
+BEND_STEPS = 24
+"""A bend is looked at in so many steps; its outermost point is then right to 0.1 %."""
+
+
+class Side(Enum):
+    """A face of the concrete, by the direction it looks in; left is +y, start is −x."""
+
+    TOP = "top"
+    BOTTOM = "bottom"
+    LEFT = "left"
+    RIGHT = "right"
+    START = "start"
+    END = "end"
+
+
+SIDES = tuple(Side)
+
+
+@dataclass(frozen=True, slots=True)
+class BarCover:
+    """Least distances of one real bar to each face; infinite where it meets no such face."""
+
+    bar: str
+    placing: int
+    distances: tuple[float, ...]  # [mm] in the order of SIDES
+    xs: tuple[float, ...]  # where each least distance is [mm]
+
+    def to(self, side: Side) -> float:
+        """Return the cover to one face; negative outside the concrete. [mm]"""
+        return self.distances[SIDES.index(side)]
+
+    def where(self, side: Side) -> float:
+        """Return x of the least cover to one face. [mm]"""
+        return self.xs[SIDES.index(side)]
+
+
+def covers(cage: Cage, *, ribs: bool = False) -> tuple[BarCover, ...]:
+    """Return the cover of every real bar to every face of the concrete.
+
+    At each x the faces are those of the union of the prisms there: inside a wider column the
+    beam's sides are no faces. The first and last plane of the concrete are its ends.
+
+    Parameters
+    ----------
+    cage : Cage
+        The cage.
+    ribs : bool
+        Whether bars have their size over ribs.
+    """
+    if not cage.prisms:
+        return ()
+    edges = sorted({x for p in cage.prisms for x in (p.x0, p.x1)})
+    faces = [_faces(outline_at(cage.prisms, (a + b) / 2)) for a, b in pairwise(edges)]
+    found = []
+    for bar in cage.bars:
+        points, along = _samples(bar, edges)
+        radius = steel_radius(bar, ribs=ribs)
+        for k, placing in enumerate(bar.placings):
+            found.append(_cover(bar, k, points + np.array(placing), along, radius, edges, faces))
+    return tuple(found)
+
+
+def _samples(bar: Bar, edges: list[float]) -> tuple[Array, Array]:
+    """Return points of a centre line and the directions there; steps across, breaks along x."""
+    rows = []
+    for piece in centre_line(bar).segments:
+        if isinstance(piece, Arc):
+            places = [piece.length * i / BEND_STEPS for i in range(BEND_STEPS + 1)]
+        else:
+            whole = piece.length
+            level = abs(piece.end[0] - piece.start[0]) > 0.999 * whole
+            count = max(1, ceil(whole / (250.0 if level else STEP)))
+            places = [whole * i / count for i in range(count + 1)]
+            if len(bar.placings) == 1:
+                dx = bar.placings[0][0]
+                for x in edges:
+                    for s in piece.crossings(x - dx):
+                        places += [max(0.0, s - 0.01), min(whole, s + 0.01)]
+        rows += [(*p, *d) for p, d in (piece.at(s) for s in places)]
+    table = np.array(rows)
+    return table[:, :3], table[:, 3:]
+
+
+@dataclass(frozen=True, slots=True)
+class _Faces:
+    outline: Any
+    start: Array  # of each edge, y and z
+    end: Array
+    normal: Array  # outward, unit
+    side: Array  # index into SIDES
+
+
+def _faces(outline: Any) -> _Faces:
+    """Return the edges of an outline with their outward normals and the sides they belong to."""
+    starts, ends = [], []
+    for part in _SHAPELY.get_parts(_SHAPELY.orient_polygons(outline)):
+        for ring in (part.exterior, *part.interiors):
+            xy = _SHAPELY.get_coordinates(ring)
+            starts.append(xy[:-1])
+            ends.append(xy[1:])
+    start = np.concatenate(starts) if starts else np.zeros((0, 2))
+    end = np.concatenate(ends) if ends else np.zeros((0, 2))
+    way = end - start
+    normal = np.stack([way[:, 1], -way[:, 0]], axis=1)
+    normal /= np.maximum(np.linalg.norm(way, axis=1), 1e-9)[:, None]
+    upright = np.abs(normal[:, 1]) >= np.abs(normal[:, 0])
+    side = np.where(
+        upright, np.where(normal[:, 1] > 0, 0, 1), np.where(normal[:, 0] > 0, 2, 3)
+    ).astype(float)
+    return _Faces(outline, start, end, normal, side)
+
+
+def _cover(
+    bar: Bar, placing: int, points: Array, along: Array, radius: float,
+    edges: list[float], faces: list[_Faces],
+) -> BarCover:  # fmt: skip
+    least, xs = [float("inf")] * 6, [float(points[0, 0])] * 6
+
+    def keep(side: int, distances: Array, at: Array) -> None:
+        i = int(np.argmin(distances))
+        if distances[i] < least[side]:
+            least[side], xs[side] = float(distances[i]), float(at[i])
+
+    reach = radius * np.sqrt(np.maximum(1 - along[:, 0] ** 2, 0.0))
+    keep(4, points[:, 0] - reach - edges[0], points[:, 0])
+    keep(5, edges[-1] - points[:, 0] - reach, points[:, 0])
+    interval = np.clip(np.searchsorted(edges, points[:, 0], side="right") - 1, 0, len(faces) - 1)
+    for n in np.unique(interval):
+        rows = np.flatnonzero(interval == n)
+        distances = _to_faces(points[rows, 1:], along[rows, 1:], radius, faces[n])
+        for side in range(4):
+            mine = distances[:, faces[n].side == side]
+            if mine.size:
+                keep(side, mine.min(axis=1), points[rows, 0])
+    return BarCover(bar.id, placing, tuple(least), tuple(xs))
+
+
+def _to_faces(at: Array, along: Array, radius: float, faces: _Faces) -> Array:
+    """Return the distance of steel at each point to each face it looks at, else infinity."""
+    way = faces.end - faces.start
+    size2 = np.maximum((way**2).sum(axis=1), 1e-12)
+    rel = at[:, None, :] - faces.start[None]
+    foot = (rel * way[None]).sum(axis=2) / size2[None]
+    depth = -(rel * faces.normal[None]).sum(axis=2)
+    lean = np.clip((along[:, None, :] * faces.normal[None]).sum(axis=2), -1.0, 1.0)
+    reach = radius * np.sqrt(1 - lean**2)
+    inside = _SHAPELY.contains_xy(faces.outline, at[:, 0], at[:, 1])
+    faced = (foot >= -1e-9) & (foot <= 1 + 1e-9)
+    seen = faced & (depth >= 0)
+    result = np.where(seen, depth - reach, np.inf)
+    if not inside.all() and len(faces.start):
+        held = np.clip(foot, 0.0, 1.0)[:, :, None]
+        gone = np.linalg.norm(rel - held * way[None], axis=2)
+        nearest = gone == gone.min(axis=1, keepdims=True)
+        result = np.where(inside[:, None], result, np.where(nearest, -gone - radius, np.inf))
+    return np.asarray(result)
