@@ -13,14 +13,17 @@ from detailer.cage.pieces import (
     Array,
     Pieces,
     Whole,
-    halves,
     joined,
     near_pairs,
     pieces_of,
+    quarters,
     reach,
 )
 from detailer.model.materials import over_ribs
 from detailer.values import TOUCH, ContactKind, Role
+
+ROUGH = 0.01
+"""The depth of a penetration needs no more than this share of exactness."""
 
 MEETING = 0.05
 """Bars this close touch. [mm]"""
@@ -97,24 +100,22 @@ def _least(a: Pieces, b: Pieces, within: float, count: int) -> tuple[Whole, Arra
         better = firsts[seen.found[firsts] < best[group[firsts]]]
         best[group[better]] = seen.found[better]
         where[group[better]] = (seen.here[better] + seen.there[better]) / 2
-        loose = a.sagitta() + b.sagitta() > SURE
-        open_ = loose & (seen.least < np.minimum(best[group] - SURE, within))
+        sure = np.maximum(SURE, -ROUGH * best)[group]
+        loose = a.sagitta() + b.sagitta() > sure
+        open_ = loose & (seen.least < np.minimum(best[group] - sure, within))
         rows = np.flatnonzero(open_)
         a, b, group = _split(a.take(rows), b.take(rows), group[rows])
     return keys, best, where
 
 
 def _split(a: Pieces, b: Pieces, group: Whole) -> tuple[Pieces, Pieces, Whole]:
-    """Cut the one of each pair that strays further from its chord in two."""
+    """Cut the one of each pair that strays further from its chord in four."""
     wide = a.sagitta() >= b.sagitta()
     left, right = np.flatnonzero(wide), np.flatnonzero(~wide)
-    a_one, a_two = halves(a.take(left))
-    b_one, b_two = halves(b.take(right))
-    a_kept, b_kept = a.take(right), b.take(left)
     return (
-        joined((a_one, a_two, a_kept, a_kept)),
-        joined((b_kept, b_kept, b_one, b_two)),
-        np.concatenate((group[left], group[left], group[right], group[right])),
+        joined((*quarters(a.take(left)), *(a.take(right),) * 4)),
+        joined((*(b.take(left),) * 4, *quarters(b.take(right)))),
+        np.concatenate((group[left],) * 4 + (group[right],) * 4),
     )
 
 

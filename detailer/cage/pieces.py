@@ -44,10 +44,13 @@ class Pieces:
 
     def at(self, t: Array) -> Array:
         """Return the point of each row at its parameter."""
-        bent = self.radius > 0
-        a = np.where(bent, self.radius * np.cos(t), t)[:, None]
-        b = np.where(bent, self.radius * np.sin(t), 0.0)[:, None]
-        return np.asarray(self.base + a * self.u + b * self.v)
+        points = self.base + t[:, None] * self.u
+        bent = np.flatnonzero(self.radius)
+        if len(bent):
+            turn, radius = t[bent, None], self.radius[bent, None]
+            sway = radius * (np.cos(turn) * self.u[bent] + np.sin(turn) * self.v[bent])
+            points[bent] = self.base[bent] + sway
+        return np.asarray(points)
 
     def sagitta(self) -> Array:
         """Return how far each row strays from its chord. [mm]"""
@@ -218,14 +221,20 @@ def _chunks(counts: Whole, most: int = 500_000) -> list[Whole]:
     return [c for c in np.split(np.arange(len(counts)), edges) if len(c)]
 
 
-def halves(pieces: Pieces) -> tuple[Pieces, Pieces]:
-    """Return the pieces cut in two at the middle of their parameters."""
-    middle = (pieces.t0 + pieces.t1) / 2
+def quarters(pieces: Pieces) -> tuple[Pieces, ...]:
+    """Return the pieces cut in four at equal steps of their parameters."""
+    step = (pieces.t1 - pieces.t0) / 4
     none = np.zeros_like(pieces.first)
     same = (pieces.bar, pieces.thick, pieces.base, pieces.u, pieces.v, pieces.radius)
-    return (
-        Pieces(*same, pieces.t0, middle, pieces.first, none),
-        Pieces(*same, middle, pieces.t1, none, pieces.last),
+    return tuple(
+        Pieces(
+            *same,
+            pieces.t0 + k * step,
+            pieces.t0 + (k + 1) * step,
+            pieces.first if k == 0 else none,
+            pieces.last if k == 3 else none,
+        )
+        for k in range(4)
     )
 
 
