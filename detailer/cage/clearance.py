@@ -25,6 +25,9 @@ from detailer.values import TOUCH, ContactKind, Role
 ROUGH = 0.01
 """The depth of a penetration needs no more than this share of exactness."""
 
+FINE = 0.001
+"""A clear distance is right to this share of it, or to 0.001 mm where that is more."""
+
 MEETING = 0.05
 """Bars this close touch. [mm]"""
 
@@ -100,7 +103,7 @@ def _least(a: Pieces, b: Pieces, within: float, count: int) -> tuple[Whole, Arra
         better = firsts[seen.found[firsts] < best[group[firsts]]]
         best[group[better]] = seen.found[better]
         where[group[better]] = (seen.here[better] + seen.there[better]) / 2
-        sure = np.maximum(SURE, -ROUGH * best)[group]
+        sure = np.maximum(SURE, np.where(best < 0, -ROUGH, FINE) * best)[group]
         loose = a.sagitta() + b.sagitta() > sure
         open_ = loose & (seen.least < np.minimum(best[group] - sure, within))
         rows = np.flatnonzero(open_)
