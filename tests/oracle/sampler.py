@@ -31,6 +31,9 @@ class Real:
         self.chain = chain + np.array(bar["placings"][number], dtype=float)
         self.low = self.chain.min(axis=0) - self.r
         self.high = self.chain.max(axis=0) + self.r
+        p, q = self.chain[:-1], self.chain[1:]
+        self.small = np.minimum(p, q) - self.r
+        self.large = np.maximum(p, q) + self.r
 
     @property
     def name(self) -> str:
@@ -88,9 +91,15 @@ def reals_of(member: dict[str, Any]) -> list[Real]:
 
 def chords(real: Real, low: np.ndarray, high: np.ndarray) -> np.ndarray:
     """Return numbers of the chords whose boxes meet a box."""
-    p, q = real.chain[:-1], real.chain[1:]
-    small, large = np.minimum(p, q) - real.r, np.maximum(p, q) + real.r
-    return np.flatnonzero(np.all((small <= high) & (large >= low), axis=1))
+    if (real.low > high).any() or (real.high < low).any():
+        return np.zeros(0, dtype=int)
+    meets = real.large[:, 0] >= low[0]
+    meets &= real.small[:, 0] <= high[0]
+    if not meets.any():
+        return np.zeros(0, dtype=int)
+    rows = np.flatnonzero(meets)
+    small, large = real.small[rows, 1:], real.large[rows, 1:]
+    return rows[np.all((small <= high[1:]) & (large >= low[1:]), axis=1)]
 
 
 def clear(a: Real, ia: np.ndarray, b: Real, ib: np.ndarray) -> tuple[float, float]:
@@ -217,7 +226,7 @@ def ids(a: str, b: str) -> tuple[str, str]:
 
 def own_ends(real: Real) -> str:
     """Say when the two ends of a link penetrate: the first third of it against the last."""
-    if real.role not in ("link", "tie") or len(real.chain) < 9:
+    if real.role not in ("link", "tie") or real.number or len(real.chain) < 9:
         return ""
     run = np.concatenate(([0.0], np.cumsum(np.linalg.norm(np.diff(real.chain, axis=0), axis=1))))
     first = np.flatnonzero(run[1:] <= run[-1] / 3)
