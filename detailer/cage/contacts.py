@@ -9,8 +9,8 @@ from math import hypot
 from detailer.cage.bar import Bar, Cage, Contact
 from detailer.cage.clearance import Gap, gaps, self_gap
 from detailer.cage.line import centre_line
-from detailer.cage.vec import add, distance, dot, times
-from detailer.values import TOUCH, ContactKind
+from detailer.cage.vec import add, distance, dot, norm, sub, times, unit
+from detailer.values import TOUCH, ContactKind, Role
 
 LAP_STEP = 25.0
 """A lap is tried at steps of this. [mm]"""
@@ -19,11 +19,16 @@ PARALLEL = 0.9998
 """Cosine of the angle between lapped bars; about one degree."""
 
 
+HOLDERS = (Role.LINK, Role.TIE)
+"""What holds a bar by a corner contact."""
+
+
 def contact_problem(cage: Cage, contact: Contact) -> str | None:
     """Return why a declared contact does not hold, None where it does.
 
-    corner, crossing: bars touch at both ends of the window. lap, bundle: some placing of one
-    lies parallel to and touches some placing of the other over the whole window.
+    corner, crossing: bars touch at both ends of the window, a corner not only at a hook's tail.
+    lap, bundle: some placing of one lies parallel to and touches some placing of the other over
+    the whole window.
 
     Parameters
     ----------
@@ -72,6 +77,50 @@ def contact_problems(cage: Cage) -> tuple[tuple[Contact, str], ...]:
     return tuple(found)
 
 
+def corner_contacts(cage: Cage) -> tuple[Contact, ...]:
+    """Return a contact for every bar that lies against a leg or a bend of a link or tie.
+
+    For the placer to declare, over the bars it has placed: a seated bar touches the bend and
+    neither leg, so only the true shapes tell. What touches a hook's tail is not among them.
+
+    Parameters
+    ----------
+    cage : Cage
+        The placed bars; its contacts and its concrete do not matter.
+    """
+    known = {bar.id: bar for bar in cage.bars}
+    spans: dict[tuple[str, str], list[float]] = {}
+    for gap in gaps(cage, within=TOUCH):
+        a, b = known[gap.a], known[gap.b]
+        holders = [(bar, k) for bar, k in ((a, gap.ai), (b, gap.bi)) if bar.role in HOLDERS]
+        if len(holders) != 1 or gap.gap < -TOUCH:
+            continue
+        if not _on_tail(*holders[0], gap, (a.dia + b.dia) / 4):
+            spans.setdefault((a.id, b.id), []).append(gap.at[0])
+    return tuple(
+        Contact(ContactKind.CORNER, a, b, min(xs), max(xs)) for (a, b), xs in sorted(spans.items())
+    )
+
+
+def _on_tail(holder: Bar, placing: int, gap: Gap, half: float) -> bool:
+    """Return whether a contact lies on the straight tail of a hook, past its first 2 mm."""
+    if len(holder.corners) < 4:
+        return False
+    at = sub(gap.at, holder.placings[placing])
+    segments = centre_line(holder).segments
+    for tip, root in (
+        (segments[0].start, segments[0].end),
+        (segments[-1].end, segments[-1].start),
+    ):
+        way = sub(root, tip)
+        size = norm(way)
+        share = dot(sub(at, tip), way) / max(size, 1e-9)
+        share = min(max(share, 0.0), max(size - 2.0, 0.0))
+        if distance(at, add(tip, unit(way), share)) <= half + TOUCH / 2:
+            return True
+    return False
+
+
 def _touch_problem(a: Bar, b: Bar, contact: Contact, found: tuple[Gap, ...]) -> str | None:
     mine = [g for g in found if {g.a, g.b} == {a.id, b.id}]
     slack = 2 * (a.dia + b.dia)
@@ -79,6 +128,12 @@ def _touch_problem(a: Bar, b: Bar, contact: Contact, found: tuple[Gap, ...]) -> 
         near = [g for g in mine if abs(g.at[0] - x) <= slack]
         if not near:
             return f"{a.name} and {b.name} do not touch at x {x:.0f}"
+        holder = a if a.role in HOLDERS else b
+        if contact.kind is ContactKind.CORNER and all(
+            _on_tail(holder, g.ai if g.a == holder.id else g.bi, g, (a.dia + b.dia) / 4)
+            for g in near
+        ):
+            return f"{a.name} and {b.name} touch at a hook's tail at x {x:.0f}"
         deepest = min(g.gap for g in near)
         if deepest < -TOUCH:
             return f"{a.name} and {b.name} penetrate by {-deepest:.1f} mm at x {x:.0f}"

@@ -1,10 +1,19 @@
 import pytest
 
 from detailer.cage.bar import Bar, Cage, Contact, Prism
-from detailer.cage.contacts import contact_problem, contact_problems
+from detailer.cage.clearance import gaps, undeclared
+from detailer.cage.contacts import contact_problem, contact_problems, corner_contacts
 from detailer.cage.cover import Side, covers
 from detailer.cage.cut import cut
-from detailer.cage.forms import Crank, HookCorner, Path, across_path, bar_path, closed_link
+from detailer.cage.forms import (
+    Crank,
+    HookCorner,
+    Path,
+    across_path,
+    bar_path,
+    closed_link,
+    corner_seat,
+)
 from detailer.values import ContactKind, Face, Role
 
 
@@ -36,6 +45,38 @@ def test_corner_contact():
     assert contact_problems(cage_of(link, off, contacts=(contact,)))[0][0] == contact
     short = made("m", bar_path(0, 300, 82 - seat - 8, -417 + seat + 8, dia=16, mandrel=128), 16)
     assert "400" in contact_problem(cage_of(link, short), contact)
+
+
+def test_corner_contacts_are_found_by_shape():
+    link = made("l", LINK, 8, Role.LINK, xs=(100.0, 250.0, 400.0))
+    seat = (1 - 0.5**0.5) * (16 - 8)
+    bar = made("m", bar_path(0, 300, 82 - seat - 8, -417 + seat + 8, dia=16, mandrel=128), 16)
+    free = made("n", bar_path(0, 300, 0, -300, dia=16, mandrel=128), 16)
+    (contact,) = corner_contacts(cage_of(link, bar, free))
+    assert (contact.kind, contact.a, contact.b) == (ContactKind.CORNER, "l", "m")
+    assert (contact.x0, contact.x1) == pytest.approx((100, 250), abs=4)
+    assert contact_problem(cage_of(link, bar), contact) is None
+
+
+def test_a_tail_is_no_corner():
+    link = made("l", LINK, 8, Role.LINK, xs=(100.0,))
+    tip = LINK.corners[0]
+    y, z = tip[1] - (8 + 4) / 2**0.5 + 10, tip[2] + (8 + 4) / 2**0.5 + 10
+    bar = made("m", bar_path(0, 300, y, z, dia=16, mandrel=128), 16)
+    assert len(gaps(cage_of(link, bar), within=0.5)) == 1
+    assert corner_contacts(cage_of(link, bar)) == ()
+    wrong = Contact(ContactKind.CORNER, "l", "m", 100, 100)
+    assert "tail" in contact_problem(cage_of(link, bar), wrong)
+
+
+@pytest.mark.parametrize("dia", [12, 16, 20, 25, 32])
+def test_a_bar_that_fills_the_bend_is_a_corner(dia):
+    link = made("l", LINK, 8, Role.LINK, xs=(100.0,))
+    seat = corner_seat(16, dia)
+    y, z = 82 - seat - dia / 2, -33 - seat - dia / 2
+    bar = made("m", bar_path(0, 300, y, z, dia=dia, mandrel=8 * dia), dia)
+    assert [c.b for c in corner_contacts(cage_of(link, bar))] == ["m"]
+    assert undeclared(cage_of(link, bar, contacts=corner_contacts(cage_of(link, bar)))) == ()
 
 
 def test_self_contact_of_a_link():
