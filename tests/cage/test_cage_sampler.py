@@ -3,6 +3,8 @@
 from dataclasses import replace
 
 import pytest
+from hypothesis import given, settings
+from hypothesis import strategies as st
 from cage.test_cage_wire import PROJECT
 from oracle.sampler import sample
 
@@ -96,3 +98,19 @@ def test_cover_lost_is_seen():
     link = closed_link(y0=-90, y1=90.2, z0=-425, z1=-25, dia=8, corner=HookCorner.TOP_LEFT)
     seen, _, _ = both(swap(good(), "l0", link))
     assert any("left cover" in line for line in seen)
+
+
+@settings(max_examples=12, deadline=None)
+@given(st.integers(-40, 40), st.integers(-30, 60), st.integers(-300, 300))
+def test_program_and_sampler_see_the_same_clashes(dy, dz, dx):
+    """Move one bar anywhere: what clearly penetrates for one penetrates for the other."""
+    path = bar_path(600 + dx, 1970, 36.3 + dy, -409.3 + dz, dia=16, mandrel=128)
+    seen, clashes, _ = both(swap(good(), "two", path))
+    deep = {tuple(sorted((f"{g.a}[{g.ai}]", f"{g.b}[{g.bi}]"))) for g in clashes if g.gap < -0.6}
+    sampled = {}
+    for line in seen:
+        if "penetrate by" in line:
+            a, _, b, *_, by, _, _, _ = line.removeprefix("B: ").split()
+            sampled[tuple(sorted((a, b)))] = float(by)
+    assert deep <= set(sampled)
+    assert {pair for pair, by in sampled.items() if by > 0.6} <= deep
