@@ -42,8 +42,10 @@ class Bar:
 
     def __post_init__(self) -> None:
         if len(self.corners) != len(self.mandrels) + 2:
-            raise ValueError(f"bar {self.id}: {len(self.mandrels)} mandrels for "
-                             f"{len(self.corners) - 2} inner corners")
+            raise ValueError(
+                f"bar {self.id}: {len(self.mandrels)} mandrels for "
+                f"{len(self.corners) - 2} inner corners"
+            )
 
     @property
     def name(self) -> str:
@@ -64,7 +66,7 @@ class Contact:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Prism:
-    """Concrete of one outline in y-z from x0 to x1; a cage's concrete is the union of its prisms."""
+    """Concrete of one outline in y-z from x0 to x1; the concrete is the union of the prisms."""
 
     name: str  # "span 1 web", "span 1 flange", "column B1", "wall E2"
     x0: float

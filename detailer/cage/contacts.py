@@ -4,7 +4,6 @@ from __future__ import annotations
 
 from dataclasses import replace
 from itertools import product
-from math import hypot
 
 from detailer.cage.bar import Bar, Cage, Contact
 from detailer.cage.clearance import Gap, gaps, self_gap
@@ -178,22 +177,3 @@ def _apart(a: Bar, i: int, b: Bar, j: int, x: float) -> float | None:
         gap = distance(square, (0.0, 0.0, 0.0)) - (a.dia + b.dia) / 2
         best = gap if best is None or abs(gap) < abs(best) else best
     return best
-
-
-def lap_gap(a: tuple[Bar, int], b: tuple[Bar, int], x: float) -> float | None:
-    """Return the clear distance of two real bars at a plane x, None where not both cross it.
-
-    Parameters
-    ----------
-    a, b : tuple of (Bar, int)
-        The bars and the indices of their placings.
-    x : float
-        Position of the plane. [mm]
-    """
-    (one, i), (other, j) = a, b
-    (ax, ay, az), (bx, by, bz) = one.placings[i], other.placings[j]
-    found = [
-        hypot(p.y + ay - q.y - by, p.z + az - q.z - bz) - (one.dia + other.dia) / 2
-        for p, q in product(centre_line(one).at_x(x - ax), centre_line(other).at_x(x - bx))
-    ]
-    return min(found, default=None)

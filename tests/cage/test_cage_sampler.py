@@ -3,9 +3,9 @@
 from dataclasses import replace
 
 import pytest
+from cage.test_cage_wire import PROJECT
 from hypothesis import given, settings
 from hypothesis import strategies as st
-from cage.test_cage_wire import PROJECT
 from oracle.sampler import sample
 
 from detailer.cage.bar import Bar, Cage, Contact, Prism
