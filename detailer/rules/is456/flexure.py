@@ -1,0 +1,179 @@
+"""Bending: IS 456:2000, 38.1 and Annex G; stress of steel by Fig. 23."""
+
+from __future__ import annotations
+
+from math import sqrt
+
+CONCRETE_STRAIN = 0.0035
+"""Strain of concrete at its outermost fibre, 38.1 b."""
+
+BLOCK_FORCE = 0.36
+"""Force of the stress block over fck b xu, 38.1 c."""
+
+BLOCK_CENTRE = 0.42
+"""Depth of that force over xu, 38.1 c."""
+
+FLANGE_STRESS = 0.45
+"""Stress in a flange over fck, G-2.2."""
+
+STEEL_MODULUS = 200_000.0
+"""Modulus of elasticity of steel, 5.6.3. [N/mm²]"""
+
+XU_LIMIT = {250: 0.53, 415: 0.48, 500: 0.46}
+"""Greatest depth of the neutral axis over d, 38.1."""
+
+CURVE = ((0.80, 0.0), (0.85, 0.0001), (0.90, 0.0003), (0.95, 0.0007), (0.975, 0.001), (1.0, 0.002))
+"""Inelastic strain of cold-worked bars at shares of the design strength, Fig. 23 A.
+
+FROM MEMORY (page_seen=False).
+"""
+
+
+def xu_limit(fy: float) -> float:
+    """Return the greatest depth of the neutral axis over the effective depth. [-]
+
+    Parameters
+    ----------
+    fy : float
+        Characteristic strength. [N/mm²]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 38.1 (confirmed on the page); other grades by its strain condition,
+       0.0035/(0.0055 + 0.87 fy/Es) (derived).
+    """
+    printed = XU_LIMIT.get(round(fy))
+    return printed if printed is not None else 0.0035 / (0.0055 + 0.87 * fy / STEEL_MODULUS)
+
+
+def steel_stress(strain: float, fy: float) -> float:
+    """Return the design stress of steel at a strain, unsigned. [N/mm²]
+
+    Parameters
+    ----------
+    strain : float
+        Strain. [-]
+    fy : float
+        Characteristic strength; up to 250 the line has a sharp yield. [N/mm²]
+
+    References
+    ----------
+    .. [1] IS 456:2000, Fig. 23; points of the curve FROM MEMORY (page_seen=False).
+    """
+    size = abs(strain)
+    design = 0.87 * fy
+    if fy <= 250:
+        return min(STEEL_MODULUS * size, design)
+    below = (CURVE[0][0] * design / STEEL_MODULUS, CURVE[0][0] * design)
+    if size <= below[0]:
+        return STEEL_MODULUS * size
+    for share, inelastic in CURVE[1:]:
+        here = (share * design / STEEL_MODULUS + inelastic, share * design)
+        if size <= here[0]:
+            along = (size - below[0]) / (here[0] - below[0])
+            return below[1] + along * (here[1] - below[1])
+        below = here
+    return design
+
+
+def rectangle_moment(b: float, d: float, area: float, fck: float, fy: float) -> float:
+    """Return the moment of resistance of an under-reinforced rectangle. [N·mm]
+
+    Parameters
+    ----------
+    b : float
+        Width. [mm]
+    d : float
+        Effective depth. [mm]
+    area : float
+        Tension steel. [mm²]
+    fck : float
+        Characteristic strength of concrete. [N/mm²]
+    fy : float
+        Characteristic strength of steel. [N/mm²]
+
+    References
+    ----------
+    .. [1] IS 456:2000, G-1.1 b (confirmed on the page).
+    """
+    return 0.87 * fy * area * d * (1 - area * fy / (b * d * fck))
+
+
+def rectangle_steel(
+    b: float, d: float, moment: float, fck: float, design: float, block: float = 1.0
+) -> float:
+    """Return the tension steel of an under-reinforced rectangle. [mm²]
+
+    Parameters
+    ----------
+    b : float
+        Width. [mm]
+    d : float
+        Effective depth. [mm]
+    moment : float
+        Factored moment. [N·mm]
+    fck : float
+        Characteristic strength of concrete. [N/mm²]
+    design : float
+        Design stress of steel: 0.87 fy here, fy/1.15 in the design aids. [N/mm²]
+    block : float
+        Coefficient of the lever-arm term on As fy/(b d fck), with fy = design/0.87: 1.0 in
+        Annex G, 1.005 in the design aids. [-]
+
+    Raises
+    ------
+    ValueError
+        No area reaches the moment.
+
+    References
+    ----------
+    .. [1] IS 456:2000, G-1.1 b solved for the area (confirmed on the page).
+    """
+    k = block / (0.87 * fck * b * d)
+    root = 1 - 4 * k * moment / d
+    if root < 0:
+        raise ValueError("the section cannot carry the moment with tension steel alone")
+    return (1 - sqrt(root)) / (2 * k) / design
+
+
+def limit_moment(b: float, d: float, fck: float, fy: float) -> float:
+    """Return the greatest moment of a singly reinforced rectangle. [N·mm]
+
+    Parameters
+    ----------
+    b : float
+        Width. [mm]
+    d : float
+        Effective depth. [mm]
+    fck : float
+        Characteristic strength of concrete. [N/mm²]
+    fy : float
+        Characteristic strength of steel. [N/mm²]
+
+    References
+    ----------
+    .. [1] IS 456:2000, G-1.1 c (confirmed on the page).
+    """
+    k = xu_limit(fy)
+    return BLOCK_FORCE * k * (1 - BLOCK_CENTRE * k) * b * d * d * fck
+
+
+def flange_depth(df: float, d: float, xu: float) -> float:
+    """Return the depth over which a flange counts at 0.45 fck. [mm]
+
+    Parameters
+    ----------
+    df : float
+        Thickness of the flange. [mm]
+    d : float
+        Effective depth. [mm]
+    xu : float
+        Depth of the neutral axis. [mm]
+
+    References
+    ----------
+    .. [1] IS 456:2000, G-2.2, G-2.2.1 and G-2.3 (confirmed on the page).
+    """
+    if df <= 0.43 * xu or (df / d <= 0.2 and xu >= xu_limit(250) * d):
+        return df
+    return min(0.15 * xu + 0.65 * df, df)
