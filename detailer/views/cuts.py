@@ -1,0 +1,126 @@
+"""Where sections are cut: at faces, at midspan, in laps, and wherever what is cut changes."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+from itertools import pairwise
+
+from detailer.cage.bar import Cage
+from detailer.cage.cut import bars_at, links_at, outline_at
+from detailer.cage.line import Straight, centre_line
+from detailer.values import Role
+
+FROM_FACE = 150.0
+"""A section at a face is cut this far inside the span, before the first change. [mm]"""
+
+SHORT = 100.0
+"""A stretch shorter than this between two bar ends gets no section of its own. [mm]"""
+
+LEVEL = 1.0 - 1e-9
+"""A bar in a crank has a direction with less of x than this."""
+
+
+@dataclass(frozen=True, slots=True)
+class Cut:
+    """A place where a section is cut; equal ones have the same letter."""
+
+    letter: str
+    x: float
+
+
+def cuts_of(cage: Cage, clear: tuple[tuple[float, float], ...]) -> tuple[Cut, ...]:
+    """Return where a beam is cut, from left to right.
+
+    Parameters
+    ----------
+    cage : Cage
+        The cage, its bars marked.
+    clear : tuple of (float, float)
+        Each span between the faces of its supports. [mm]
+    """
+    letters: dict[object, str] = {}
+    found: list[Cut] = []
+    places = sorted(_places(cage, clear))
+    for wanted in (True, False):
+        for x, _ in (p for p in places if p[1] is wanted):
+            seen = signature(cage, x)
+            if seen in letters and not wanted:
+                continue
+            letters.setdefault(seen, "")
+            found.append(Cut("", x))
+    for cut in sorted(found, key=lambda c: c.x):
+        seen = signature(cage, cut.x)
+        if not letters[seen]:
+            letters[seen] = letter(sum(1 for name in letters.values() if name))
+    return tuple(
+        Cut(letters[signature(cage, cut.x)], cut.x) for cut in sorted(found, key=lambda c: c.x)
+    )
+
+
+def letter(number: int) -> str:
+    """Return the letter of a section, I and O left out; AA follows Z.
+
+    Parameters
+    ----------
+    number : int
+        From 0.
+    """
+    letters = "ABCDEFGHJKLMNPQRSTUVWXYZ"
+    more, rest = divmod(number, len(letters))
+    return letter(more - 1) + letters[rest] if more else letters[rest]
+
+
+def signature(cage: Cage, x: float) -> object:
+    """Return what makes two sections equal: concrete, bars by mark and place, kind of links.
+
+    Parameters
+    ----------
+    cage : Cage
+        The cage.
+    x : float
+        Where it is cut. [mm]
+    """
+    outline = outline_at(cage.prisms, x)
+    top = outline.bounds[3] if not outline.is_empty else 0.0
+    shape = tuple(round(v) for v in (*outline.bounds[:3:2], outline.area)) if top == top else ()
+    bars = tuple(
+        sorted((c.bar.name, round(c.y), round(c.z - top)) for c in bars_at(cage, x) if c.square)
+    )
+    links = tuple(sorted({bar.name for bar, _ in links_at(cage, x)}))
+    return shape, bars, links
+
+
+def _places(cage: Cage, clear: tuple[tuple[float, float], ...]) -> Iterator[tuple[float, bool]]:
+    """Yield where to cut and whether it is asked for however equal to another."""
+    events = sorted(set(_events(cage)))
+    for x0, x1 in clear:
+        stops = [x0, *(x for x in events if x0 + 1 < x < x1 - 1), x1]
+        middle = (x0 + x1) / 2
+        for a, b in pairwise(stops):
+            if a <= middle < b:
+                yield middle if _level_at(cage, middle) else (a + b) / 2, True
+            elif b - a >= SHORT and _level_at(cage, (a + b) / 2):
+                yield (a + b) / 2, False
+        yield x0 + min(FROM_FACE, (stops[1] - x0) / 2), True
+        yield x1 - min(FROM_FACE, (x1 - stops[-2]) / 2), True
+
+
+def _events(cage: Cage) -> Iterator[float]:
+    """Yield every x where the set of bars cut, or the place of one of them, changes."""
+    for bar in cage.bars:
+        if bar.role in (Role.LINK, Role.TIE, Role.SPACER):
+            continue
+        line = centre_line(bar)
+        ends: list[float] = []
+        for piece in line.segments:
+            if isinstance(piece, Straight):
+                (xa, ya, za), (xb, yb, zb) = piece.start, piece.end
+                if abs(xa - xb) > max(abs(ya - yb), abs(za - zb)):
+                    ends += [xa, xb]
+        for dx, _, _ in bar.placings:
+            yield from (round(x + dx, 1) for x in ends)
+
+
+def _level_at(cage: Cage, x: float) -> bool:
+    return all(abs(c.along[0]) > LEVEL for c in bars_at(cage, x))

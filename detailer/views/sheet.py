@@ -1,0 +1,272 @@
+"""One beam on one sheet: the views of its cage, its schedule and its notes, composed on paper."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass, replace
+from functools import cached_property
+
+from detailer.cage.bar import Cage
+from detailer.drawing.primitives import XY, Drawing, Placed, Primitive, Sheet, View
+from detailer.drawing.sheets import make_view
+from detailer.findings import Finding
+from detailer.model import Assumption, Beam, Project
+from detailer.schedule.rows import Row as ScheduleRow
+from detailer.statics import Envelope
+from detailer.values import Face
+from detailer.views.bent import bent_items
+from detailer.views.chains import elevation_items
+from detailer.views.cuts import Cut, cuts_of
+from detailer.views.demand import curves_of
+from detailer.views.diagram import Curves, diagram_items
+from detailer.views.elevation import picture, stage_of
+from detailer.views.notes import Note, note_items, notes_of, set_notes
+from detailer.views.outline import clear_spans
+from detailer.views.pack import GAP, Room, Row, pack, set_rows
+from detailer.views.paper import PAPERS, Paper, space_of, title_room
+from detailer.views.pulled import pulled_items
+from detailer.views.section import section_items
+from detailer.views.table import Table, table_items, table_of
+
+SECTION_SCALES = (10.0, 15.0, 20.0)
+"""Scales of sections, the largest picture first."""
+
+NOTE_WIDTHS = (185.0, 150.0, 120.0, 95.0)
+"""Widths notes may be set in. [mm on paper]"""
+
+GROUP_WIDTHS = (1.0, 0.75, 0.6, 0.45, 0.35)
+"""Widths the rows of sections may have, as shares of the paper."""
+
+LOWER = (Face.BOTTOM, Face.LEFT, Face.RIGHT)
+
+
+@dataclass(frozen=True)
+class Content:
+    """Everything a beam's sheet shows, views made once a scale."""
+
+    beam: Beam
+    cage: Cage
+    cuts: tuple[Cut, ...]
+    curves: Curves | None
+    notes: tuple[Note, ...]
+    table: Table
+
+    @cached_property
+    def _made(self) -> dict[tuple[str, float], tuple[View, ...]]:
+        return {}
+
+    def stack(self, scale: float) -> tuple[View, ...]:
+        """Return the views that share an x axis, from the top down."""
+        key = ("stack", scale)
+        if key not in self._made:
+            self._made[key] = tuple(_stack(self, scale))
+        return self._made[key]
+
+    def sections(self, scale: float) -> tuple[View, ...]:
+        """Return the sections by letter, then links, ties and spacers."""
+        key = ("sections", scale)
+        if key not in self._made:
+            self._made[key] = tuple(_sections(self, scale))
+        return self._made[key]
+
+
+def beam_drawing(
+    project: Project,
+    beam: Beam,
+    envelope: Envelope | None,
+    cage: Cage,
+    findings: tuple[Finding, ...],
+    rows: tuple[ScheduleRow, ...],
+    *,
+    assumptions: tuple[Assumption, ...],
+) -> Drawing:
+    """Return the drawing of a beam: one sheet, on the smallest paper that holds it.
+
+    Parameters
+    ----------
+    project, beam : Project, Beam
+        What was asked.
+    envelope : Envelope or None
+        What the design asks for; None draws no moments.
+    cage : Cage
+        What was placed, its bars marked.
+    findings : tuple of Finding
+        Sorted, of any members.
+    rows : tuple of Row
+        The schedule, of any members.
+    assumptions : tuple of Assumption
+        Of the project and any members.
+    """
+    clear = clear_spans(cage)
+    cuts = cuts_of(cage, clear)
+    strands = stage_of(cage, PAPERS[0].scale, cuts).strands
+    content = Content(
+        beam=beam,
+        cage=cage,
+        cuts=cuts,
+        curves=curves_of(project, beam, envelope, cage),
+        notes=notes_of(project, beam, cage, strands, findings, assumptions),
+        table=table_of(cage, rows),
+    )
+    title = f"Beam {beam.mark}: elevation, sections, bars, moments, schedule"
+    sheet = _sheet(project, content, title)
+    return Drawing(
+        name=beam.mark,
+        title=title,
+        description=_description(beam, cage, cuts),
+        sheets=(sheet,),
+    )
+
+
+def _description(beam: Beam, cage: Cage, cuts: tuple[Cut, ...]) -> str:
+    names = ", ".join(s.name for s in cage.supports)
+    sections = len({cut.letter for cut in cuts})
+    return (
+        f"Reinforcement of beam {beam.mark} over supports {names}: elevation, {sections} sections, "
+        "bars pulled out, moments with resistance, schedule and notes."
+    )
+
+
+def _stack(content: Content, scale: float) -> Iterator[View]:
+    cage = content.cage
+    stage = stage_of(cage, scale, content.cuts)
+    text = f"1:{scale:.0f}"
+    top = pulled_items(stage, (Face.TOP,))
+    if top:
+        yield make_view(f"{cage.member} top bars", f"Top bars {text}", scale, top)
+    items = (*picture(stage), *elevation_items(stage, content.beam))
+    yield make_view(f"{cage.member} elevation", f"Elevation of {cage.member} {text}", scale, items)
+    low = pulled_items(stage, LOWER)
+    if low:
+        sides = any(s.bar.face in LOWER[1:] for s in stage.strands)
+        words = "Bottom and side bars" if sides else "Bottom bars"
+        yield make_view(f"{cage.member} bottom bars", f"{words} {text}", scale, low)
+    if content.curves is not None:
+        moments = diagram_items(stage, content.curves)
+        yield make_view(f"{cage.member} moments", "Moments, kN·m", scale, moments)
+
+
+def _sections(content: Content, scale: float) -> Iterator[View]:
+    cage = content.cage
+    firsts: dict[str, Cut] = {}
+    for cut in content.cuts:
+        firsts.setdefault(cut.letter, cut)
+    for letter in sorted(firsts, key=lambda n: (len(n), n)):
+        name, title = f"{letter}-{letter}", f"{letter}-{letter} 1:{scale:.0f}"
+        items = section_items(cage, firsts[letter].x, scale)
+        yield make_view(f"{cage.member} {name}", title, scale, items)
+    bent = bent_items(cage, scale)
+    if bent:
+        title = f"Links and spacers 1:{scale:.0f}"
+        yield make_view(f"{cage.member} links", title, scale, bent)
+
+
+def _sheet(project: Project, content: Content, title: str) -> Sheet:
+    """Return the first paper on which everything has a place."""
+    for paper in PAPERS:
+        for scale in SECTION_SCALES:
+            found = _composed(project, content, paper, scale, title)
+            if found is not None:
+                return found
+    return _unbounded(project, content, title)
+
+
+def _unbounded(project: Project, content: Content, title: str) -> Sheet:
+    """Return a sheet of the last paper's scale, made as large as the content asks."""
+    last = PAPERS[-1]
+    for grown in range(1, 40):
+        size = (last.size[0] * (1 + 0.25 * grown), last.size[1] * (1 + 0.25 * grown))
+        paper = replace(last, size=size, name=f"{size[0]:.0f} × {size[1]:.0f}")
+        found = _composed(project, content, paper, SECTION_SCALES[-1], title)
+        if found is not None:
+            return found
+    raise ValueError(f"beam {content.beam.mark} is too long for any sheet")
+
+
+def size_of(view: View) -> XY:
+    """Return what a view takes on paper, its title included. [mm]
+
+    Parameters
+    ----------
+    view : View
+        The view.
+    """
+    x0, y0, x1, y1 = view.box
+    return (x1 - x0) / view.scale, (y1 - y0) / view.scale
+
+
+def _composed(
+    project: Project, content: Content, paper: Paper, scale: float, title: str
+) -> Sheet | None:
+    space = space_of(paper)
+    if (content.cage.prisms[0].x1 - content.cage.prisms[0].x0) / paper.scale > space.x1 - space.x0:
+        return None
+    stack = content.stack(paper.scale)
+    shared = min(v.box[0] for v in stack), max(v.box[2] for v in stack)
+    wide = (shared[1] - shared[0]) / paper.scale
+    tall = sum(size_of(v)[1] + GAP for v in stack)
+    if wide > space.x1 - space.x0 or tall > space.y1 - space.y0:
+        return None
+    taken = Room(space.x0, space.y1 - tall, space.x0 + wide + GAP, space.y1)
+    placed = _blocks(content, space, (taken, title_room(paper)), scale)
+    if placed is None:
+        return None
+    views = (*_aligned(stack, space, shared[0], paper.scale), *placed[0])
+    elevation = next(p for p in views if p.view.name.endswith(" elevation"))
+    return Sheet(
+        name=content.beam.mark,
+        title=title,
+        size=paper.size,
+        views=tuple(_in_model(p, elevation) for p in views),
+        items=placed[1],
+    )
+
+
+def _aligned(stack: tuple[View, ...], space: Room, x0: float, scale: float) -> Iterator[Placed]:
+    y = space.y1
+    for view in stack:
+        y -= size_of(view)[1]
+        at = space.x0 + (view.box[0] - x0) / scale, y
+        yield Placed(view=view, at=at, model=(0.0, 0.0))
+        y -= GAP
+
+
+def _in_model(placed: Placed, elevation: Placed) -> Placed:
+    """Return a view with its place in model space: as on paper, the elevation where it is true."""
+    k, base = elevation.view.scale, elevation.view.box
+    shift = tuple(
+        round((placed.at[i] - elevation.at[i]) * k + base[i] - placed.view.box[i], 3)
+        for i in (0, 1)
+    )
+    return replace(placed, model=(shift[0], shift[1]))
+
+
+def _blocks(
+    content: Content, space: Room, fixed: tuple[Room, ...], scale: float
+) -> tuple[tuple[Placed, ...], tuple[Primitive, ...]] | None:
+    """Return sections, schedule and notes where they have a place beside what is fixed."""
+    views = content.sections(scale)
+    sizes = tuple(size_of(v) for v in views)
+    wide = space.x1 - space.x0
+    groups = [row for share in GROUP_WIDTHS if (row := set_rows(sizes, share * wide)) is not None]
+    texts = [set_notes(content.notes, width) for width in NOTE_WIDTHS]
+    member = content.beam.mark
+    choices = (
+        tuple(row.size for row in groups),
+        (content.table.size,),
+        tuple((w, t.height) for w, t in zip(NOTE_WIDTHS, texts, strict=True)),
+    )
+    found = pack(space, fixed, choices)
+    if found is None:
+        return None
+    (group, corner), (_, table_at), (text, notes_at) = found
+    items = (
+        *table_items(content.table, table_at, member),
+        *note_items(texts[text], notes_at, member),
+    )
+    return tuple(_in_rows(views, groups[group], corner)), items
+
+
+def _in_rows(views: tuple[View, ...], row: Row, corner: XY) -> Iterator[Placed]:
+    for view, (x, y) in zip(views, row.places, strict=True):
+        yield Placed(view=view, at=(corner[0] + x, corner[1] + y), model=(0.0, 0.0))
