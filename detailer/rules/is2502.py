@@ -7,10 +7,16 @@ from math import ceil, radians, tan
 from detailer.values import Required
 
 HOOK_ALLOWANCE = {2: 9.0, 3: 11.0, 4: 13.0, 6: 17.0}
-"""Allowance of a U hook in diameters by k (radius in diameters); derived, agrees with π(k + ½) + 3 − k."""
+"""Allowance of a U hook in diameters, by radius over diameter.
+
+Derived: π(k + ½) + 4 − (k + 1), to the nearest half diameter.
+"""
 
 BEND_ALLOWANCE = {2: 5.0, 3: 5.5, 4: 6.0, 6: 7.0}
-"""Allowance of a 90° bend in diameters by k; 6 d for IS 1786 bars seen second-hand, others derived."""
+"""Allowance of a 90° bend in diameters, by radius over diameter.
+
+6 d for IS 1786 bars seen second-hand, the others derived.
+"""
 
 LINK_ADDITION = {90: 20.0, 135: 24.0, 180: 28.0}
 """What two hooked ends add to 2(A + E) of a closed link on inside dimensions, in diameters.
@@ -104,8 +110,7 @@ def hook_allowance(dia: float, k: int) -> float:
     .. [1] IS 2502:1963, Table II, rebuilt from geometry (derived; rounding and least value
        FROM MEMORY, page_seen=False).
     """
-    exact = {2: 8.854, 3: 10.996, 4: 13.137, 6: 17.420}[k]
-    return _allowance(exact * dia)
+    return _allowance(HOOK_ALLOWANCE[k] * dia)
 
 
 def bend_allowance(dia: float, k: int) -> float:
@@ -123,8 +128,7 @@ def bend_allowance(dia: float, k: int) -> float:
     .. [1] IS 2502:1963, Table II, rebuilt from geometry (derived; rounding and least value
        FROM MEMORY, page_seen=False).
     """
-    exact = {2: 4.927, 3: 5.498, 4: 6.069, 6: 7.210}[k]
-    return _allowance(exact * dia)
+    return _allowance(BEND_ALLOWANCE[k] * dia)
 
 
 def link_tail(dia: float) -> float:

@@ -1,1 +1,1 @@
-
+"""What a slice of the cage can carry, and the stress a bar can develop."""

@@ -158,15 +158,16 @@ def limit_moment(b: float, d: float, fck: float, fy: float) -> float:
     return BLOCK_FORCE * k * (1 - BLOCK_CENTRE * k) * b * d * d * fck
 
 
-def flange_depth(df: float, d: float, xu: float) -> float:
+def flange_depth(df: float, xu: float) -> float:
     """Return the depth over which a flange counts at 0.45 fck. [mm]
+
+    The switch of G-2.3 at Df/xu = 0.43 and the limit Df/d = 0.2 of G-2.2 are where
+    0.15 xu + 0.65 Df reaches Df, so one formula serves all cases.
 
     Parameters
     ----------
     df : float
         Thickness of the flange. [mm]
-    d : float
-        Effective depth. [mm]
     xu : float
         Depth of the neutral axis. [mm]
 
@@ -174,6 +175,4 @@ def flange_depth(df: float, d: float, xu: float) -> float:
     ----------
     .. [1] IS 456:2000, G-2.2, G-2.2.1 and G-2.3 (confirmed on the page).
     """
-    if df <= 0.43 * xu or (df / d <= 0.2 and xu >= xu_limit(250) * d):
-        return df
     return min(0.15 * xu + 0.65 * df, df)
