@@ -3,7 +3,14 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from itertools import accumulate
+from itertools import accumulate, pairwise
+from math import ceil
+from typing import TypeAlias
+
+import numpy as np
+from numpy.typing import NDArray
+
+Line: TypeAlias = NDArray[np.float64]
 
 STEPS = 400
 """Places tried along a row."""
@@ -24,11 +31,6 @@ class Wish:
     def middle(self) -> float:
         """Return the middle of what it names."""
         return (self.low + self.high) / 2
-
-    def cost(self, x: float) -> float:
-        """Return how bad a place is."""
-        away = max(self.low - x, x - self.high, 0.0)
-        return abs(x - self.middle) + OUTSIDE * away
 
     def anchor(self, x: float) -> float:
         """Return where the leader of a text at x ends."""
@@ -86,62 +88,46 @@ def _best(
     blocked: tuple[tuple[float, float], ...],
     closed: tuple[tuple[float, float], ...],
 ) -> tuple[float, ...] | None:
+    """Return the cheapest places on the grid, None where there are none."""
     step = (right - left) / STEPS
-    grid = [left + step * i for i in range(STEPS + 1)]
-    far = float("inf")
-    tables: list[list[tuple[float, int]]] = []  # least cost with this text at or before a place
-    before: Wish | None = None
-    for wish in wishes:
-        table: list[tuple[float, int]] = []
-        best = (far, -1)
-        apart = 0.0 if before is None else (before.width + wish.width) / 2 + gap
-        back = -(-apart // step)
-        for i, x in enumerate(grid):
-            cost = far
-            if _free(wish, x, left, right, blocked, closed):
-                if before is None:
-                    cost = wish.cost(x)
-                elif i - back >= 0:
-                    cost = wish.cost(x) + tables[-1][int(i - back)][0]
-            if cost < best[0]:
-                best = (cost, i)
-            table.append(best)
-        tables.append(table)
-        before = wish
-    if tables[-1][-1][0] == far:
-        return None
-    return _walk_back(wishes, tables, grid, gap, step)
-
-
-def _walk_back(
-    wishes: tuple[Wish, ...],
-    tables: list[list[tuple[float, int]]],
-    grid: list[float],
-    gap: float,
-    step: float,
-) -> tuple[float, ...]:
-    places: list[float] = []
-    i = len(grid) - 1
-    for k in range(len(wishes) - 1, -1, -1):
-        i = tables[k][i][1]
-        places.append(grid[i])
+    grid: Line = left + step * np.arange(STEPS + 1, dtype=np.float64)
+    apart = [ceil(((a.width + b.width) / 2 + gap) / step - 1e-9) for a, b in pairwise(wishes)]
+    costs: list[Line] = []  # of the texts up to this one, this one at a place
+    for k, wish in enumerate(wishes):
+        cost = _costs(wish, grid, left, right, blocked, closed)
         if k:
-            i -= int(-(-((wishes[k - 1].width + wishes[k].width) / 2 + gap) // step))
+            reached = np.full_like(cost, np.inf)
+            if apart[k - 1] <= STEPS:
+                least = np.minimum.accumulate(costs[-1])
+                reached[apart[k - 1] :] = least[: STEPS + 1 - apart[k - 1]]
+            cost = cost + reached
+        costs.append(cost)
+    if not np.isfinite(costs[-1].min()):
+        return None
+    places: list[float] = []
+    end = STEPS
+    for k in range(len(wishes) - 1, -1, -1):
+        at = int(np.argmin(costs[k][: end + 1]))
+        places.append(float(grid[at]))
+        end = at - apart[k - 1] if k else 0
     return tuple(reversed(places))
 
 
-def _free(
+def _costs(
     wish: Wish,
-    x: float,
+    grid: Line,
     left: float,
     right: float,
     blocked: tuple[tuple[float, float], ...],
     closed: tuple[tuple[float, float], ...],
-) -> bool:
-    low, high = x - wish.width / 2, x + wish.width / 2
-    if low < left or high > right:
-        return False
-    if any(low < b and high > a for a, b in blocked):
-        return False
-    at = wish.anchor(x)
-    return not any(a < at < b for a, b in closed)
+) -> Line:
+    """Return how bad each place is for one text; infinite where it may not be."""
+    anchor = np.clip(grid, wish.low, wish.high)
+    cost = np.abs(grid - wish.middle) + OUTSIDE * np.abs(grid - anchor)
+    low, high = grid - wish.width / 2, grid + wish.width / 2
+    barred = (low < left) | (high > right)
+    for a, b in blocked:
+        barred |= (low < b) & (high > a)
+    for a, b in closed:
+        barred |= (anchor > a) & (anchor < b)
+    return np.where(barred, np.inf, cost)

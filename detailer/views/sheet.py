@@ -20,8 +20,8 @@ from detailer.views.cuts import Cut, cuts_of
 from detailer.views.demand import curves_of
 from detailer.views.diagram import Curves, diagram_items
 from detailer.views.elevation import picture, stage_of
-from detailer.views.notes import Note, note_items, notes_of, set_notes
-from detailer.views.outline import clear_spans
+from detailer.views.notes import Note, Text, note_items, notes_of, set_notes
+from detailer.views.outline import beam_depth, clear_spans
 from detailer.views.pack import GAP, Room, Row, pack, set_rows
 from detailer.views.paper import PAPERS, Paper, space_of, title_room
 from detailer.views.pulled import pulled_items
@@ -37,6 +37,15 @@ NOTE_WIDTHS = (185.0, 150.0, 120.0, 95.0)
 GROUP_WIDTHS = (1.0, 0.75, 0.6, 0.45, 0.35)
 """Widths the rows of sections may have, as shares of the paper."""
 
+AROUND = 10.0
+"""A stack of views is at least so much wider than the beam. [mm on paper]"""
+
+LEAST_STACK = 90.0
+"""A stack of views is at least so much higher than the beam is deep. [mm on paper]"""
+
+BESIDE = (40.0, 25.0)
+"""A section takes at least so much more than its web. [mm on paper]"""
+
 LOWER = (Face.BOTTOM, Face.LEFT, Face.RIGHT)
 
 
@@ -50,6 +59,11 @@ class Content:
     curves: Curves | None
     notes: tuple[Note, ...]
     table: Table
+
+    @cached_property
+    def texts(self) -> tuple[Text, ...]:
+        """Return the notes set in each of the widths they may have."""
+        return tuple(set_notes(self.notes, width) for width in NOTE_WIDTHS)
 
     @cached_property
     def _made(self) -> dict[tuple[str, float], tuple[View, ...]]:
@@ -199,7 +213,7 @@ def _composed(
     project: Project, content: Content, paper: Paper, scale: float, title: str
 ) -> Sheet | None:
     space = space_of(paper)
-    if (content.cage.prisms[0].x1 - content.cage.prisms[0].x0) / paper.scale > space.x1 - space.x0:
+    if not _hopeful(content, paper, scale):
         return None
     stack = content.stack(paper.scale)
     shared = min(v.box[0] for v in stack), max(v.box[2] for v in stack)
@@ -220,6 +234,32 @@ def _composed(
         views=tuple(_in_model(p, elevation) for p in views),
         items=placed[1],
     )
+
+
+def _hopeful(content: Content, paper: Paper, scale: float) -> bool:
+    """Return whether the least area everything needs is there, before any view is made."""
+    cage, space = content.cage, space_of(paper)
+    beams = [p for p in cage.prisms if p.name.startswith("span ")]
+    wide = (max(p.x1 for p in beams) - min(p.x0 for p in beams)) / paper.scale + AROUND
+    low, high = beam_depth(cage)
+    sections = len({cut.letter for cut in content.cuts})
+    across = max(y for p in beams if p.name.endswith(" web") for y, _ in p.outline) * 2
+    one = (across / scale + BESIDE[0]) * ((high - low) / scale + BESIDE[1])
+    table, notes = content.table.size, min(w * t.height for w, t in _notes(content))
+    title = title_room(paper)
+    need = (
+        wide * (LEAST_STACK + (high - low) / paper.scale)
+        + sections * one
+        + table[0] * table[1]
+        + notes
+        + (title.x1 - title.x0) * (title.y1 - title.y0)
+    )
+    room = space.x1 - space.x0, space.y1 - space.y0
+    return wide <= room[0] and need <= room[0] * room[1]
+
+
+def _notes(content: Content) -> Iterator[tuple[float, Text]]:
+    yield from zip(NOTE_WIDTHS, content.texts, strict=True)
 
 
 def _aligned(stack: tuple[View, ...], space: Room, x0: float, scale: float) -> Iterator[Placed]:
@@ -249,12 +289,12 @@ def _blocks(
     sizes = tuple(size_of(v) for v in views)
     wide = space.x1 - space.x0
     groups = [row for share in GROUP_WIDTHS if (row := set_rows(sizes, share * wide)) is not None]
-    texts = [set_notes(content.notes, width) for width in NOTE_WIDTHS]
+    texts = content.texts
     member = content.beam.mark
     choices = (
         tuple(row.size for row in groups),
         (content.table.size,),
-        tuple((w, t.height) for w, t in zip(NOTE_WIDTHS, texts, strict=True)),
+        tuple((w, t.height) for w, t in _notes(content)),
     )
     found = pack(space, fixed, choices)
     if found is None:
