@@ -49,49 +49,6 @@ def _touching(a: Strand, b: Strand) -> tuple[float, float] | None:
     return None
 
 
-def corners(links: tuple[Bar, ...], pairs: tuple[tuple[str, Strand], ...]) -> Iterator[Contact]:
-    """Yield a contact for every bar that lies against a link or tie.
-
-    Parameters
-    ----------
-    links : tuple of Bar
-        Links and ties.
-    pairs : tuple of (id, Strand)
-        Every strand under the id of its bar.
-    """
-    for link in links:
-        xs = sorted(p[0] for p in link.placings)
-        faces = _faces(link)
-        touched: dict[str, list[float]] = {}
-        for id_, s in pairs:
-            at = [x for x in xs if s.covers(x) and _against(s.at(x), s.dia / 2, faces)]
-            if at:
-                touched.setdefault(id_, []).extend(at)
-        for id_, at in sorted(touched.items()):
-            yield Contact(ContactKind.CORNER, *sorted((link.id, id_)), min(at), max(at))
-
-
-def _faces(link: Bar) -> tuple[float, float, float, float]:
-    """Return the inner faces of a link, or the outer faces of a tie: y0, y1, z0, z1."""
-    r = link.dia / 2
-    inner = link.corners[2:-2] if len(link.corners) > 5 else link.corners
-    ys = [y for _, y, _ in inner]
-    zs = [z for _, _, z in inner]
-    return min(ys) + r, max(ys) - r, min(zs) + r, max(zs) - r
-
-
-def _against(
-    at: tuple[float, float], radius: float, faces: tuple[float, float, float, float]
-) -> bool:
-    """Return whether a bar touches one of the legs."""
-    y, z = at
-    y0, y1, z0, z1 = faces
-    near = TOUCHING + radius
-    sides = min(abs(y - y0), abs(y1 - y)) <= near and z0 - 1 <= z <= z1 + 1
-    decks = min(abs(z - z0), abs(z1 - z)) <= near and y0 - 1 <= y <= y1 + 1
-    return sides or decks
-
-
 def crossings(spacers: tuple[Bar, ...], pairs: tuple[tuple[str, Strand], ...]) -> Iterator[Contact]:
     """Yield a contact for every bar that rests on a spacer.
 

@@ -6,13 +6,13 @@ from dataclasses import dataclass
 from math import pi
 
 import numpy as np
-from detailer.strength.bending import Row, resistance
-from detailer.strength.section import shape_of
 from numpy.typing import NDArray
 
 from detailer.model import Beam, LinkZone, Project, Span
 from detailer.rules import is456
 from detailer.statics import Envelope
+from detailer.strength.bending import Row, resistance
+from detailer.strength.section import shape_of
 from detailer.values import Face
 
 

@@ -142,7 +142,7 @@ def _place_cost(
 ) -> np.ndarray[tuple[int], np.dtype[np.float64]]:
     """Return the cost of a lap centred at each place, in mm of bar."""
     beam = lapping.beam
-    cost = np.full(len(xs), lap)
+    cost = np.full(len(xs), float(lap))
     half = lap / 2
     for support in beam.supports:
         inside = (xs + half > support.left) & (xs - half < support.right)

@@ -53,9 +53,9 @@ def stations(
     edges = [start, *bounds[1:-1], stop]
     spaces = [
         max(1, ceil((b - a) / zone.spacing - 1e-9))
-        for a, b, zone in zip(edges, edges[1:], zones, strict=True)
+        for a, b, zone in zip(edges[:-1], edges[1:], zones, strict=True)
     ]
-    pitch = [(b - a) / n for a, b, n in zip(edges, edges[1:], spaces, strict=True)]
+    pitch = [(b - a) / n for a, b, n in zip(edges[:-1], edges[1:], spaces, strict=True)]
     rows = []
     for i, zone in enumerate(zones):
         own_left = i == 0 or pitch[i] < pitch[i - 1]

@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
 from math import pi
 
 import numpy as np
 
 from detailer.cage.bar import Bar, Cage
+from detailer.cage.contacts import corner_contacts
 from detailer.model import Beam, Project
 from detailer.placing import contacts
 from detailer.placing.asides import settle
@@ -57,13 +59,8 @@ def place(project: Project, beam: Beam, envelope: Envelope | None) -> Cage:
     xs = tuple(sorted(x for group in rows.values() for row in group for x in row.xs))
     spacers = tuple(spacer_bars(project, beam, frames, strands, xs, spacer_dia(project, beam)))
     pairs, bars = _bars(project, strands)
-    declared = (
-        *contacts.laps(pairs),
-        *contacts.corners(links, pairs),
-        *contacts.crossings(spacers, pairs),
-    )
     cover = beam.cover
-    return Cage(
+    cage = Cage(
         member=beam.mark,
         copies=beam.copies,
         mirrored=beam.mirrored,
@@ -72,10 +69,16 @@ def place(project: Project, beam: Beam, envelope: Envelope | None) -> Cage:
         cover=(cover.top, cover.bottom, cover.left, cover.right),
         aggregate=project.concrete.aggregate,
         bars=(*bars, *links, *spacers),
-        contacts=tuple(sorted(declared, key=lambda c: (c.kind.value, c.a, c.b, c.x0))),
         origin=_origin(project, beam),
         direction=beam.direction,
     )
+    declared = {
+        *contacts.laps(pairs),
+        *contacts.crossings(spacers, pairs),
+        *corner_contacts(cage),
+    }
+    order = sorted(declared, key=lambda c: (c.kind.value, c.a, c.b, c.x0))
+    return replace(cage, contacts=tuple(order))
 
 
 def _strands(project: Project, beam: Beam, demand: Demand | None) -> tuple[Strand, ...]:
