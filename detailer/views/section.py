@@ -7,6 +7,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from dataclasses import dataclass, replace
+from itertools import pairwise
 from typing import Any
 
 from detailer.cage.bar import Bar, Cage
@@ -26,6 +27,9 @@ WING = 7.0
 
 SHELF = 4.2
 """Least distance of two call-outs above each other. [mm on paper]"""
+
+EXTENSION = 2.0
+"""Length of an extension line that does not reach the concrete. [mm on paper]"""
 
 FAR = 5.5
 """From the concrete to a call-out. [mm on paper]"""
@@ -319,6 +323,13 @@ def _words_left(cage: Cage, seen: Slice, kit: Kit) -> float:
     return max((kit.width(text) for _, _, text, _ in _named_left(cage, seen, kit)), default=0.0)
 
 
+def _free_level(seen: Slice, low: float, high: float) -> float:
+    """Return the middle of the highest stretch between rows of bars that is one of the widest."""
+    levels = sorted({low, high, *(c.z for c in seen.bars if low < c.z < high)})
+    widest = max(b - a for a, b in pairwise(levels))
+    return max((a + b) / 2 for a, b in pairwise(levels) if b - a > 0.9 * widest)
+
+
 def _named_left(cage: Cage, seen: Slice, kit: Kit) -> list[tuple[float, float, str, Bar]]:
     """Return links and spacers from the top down: z and x of a point on each, its text."""
     named: list[tuple[float, float, str, Bar]] = []
@@ -328,7 +339,7 @@ def _named_left(cage: Cage, seen: Slice, kit: Kit) -> list[tuple[float, float, s
             continue
         done.add(bar.name)
         box, (_, dy, dz) = outer_box(bar), bar.placings[k]
-        z = (box.z0 + box.z1) / 2 + dz + kit.mm(SHELF) * len(named)
+        z = _free_level(seen, box.z0 + dz, box.z1 + dz) + kit.mm(SHELF) * len(named)
         x = -(box.y1 - bar.dia / 2 + dy)
         named.append((z, x, f"{link_size(bar.dia, legs_of(bar))}-{bar.name}", bar))
     for bar in spacers_at(cage, seen.x):
@@ -341,12 +352,13 @@ def _named_left(cage: Cage, seen: Slice, kit: Kit) -> list[tuple[float, float, s
 
 def _dimensions(seen: Slice, web: Web, kit: Kit, words: float) -> Iterator[Primitive]:
     """Yield width, depth outside the words at the left, and the cover to the links."""
-    bottom = web.z0 - kit.mm(FAR + TEXT + 5.0)
+    bottom = web.z0 - kit.mm(FAR + TEXT + 6.0)
     left = web.x0 - kit.mm(FAR + 6.5 + 3.0) - words
-    yield Dimension(start=(web.x0, web.z0), end=(web.x1, web.z0), line=bottom)
+    short = bottom + kit.mm(EXTENSION)
+    yield Dimension(start=(web.x0, short), end=(web.x1, short), line=bottom)
     yield Dimension(start=(web.x0, web.z0), end=(web.x0, web.z1), line=left, vertical=True)
     edges = [-(outer_box(bar).y0 + bar.placings[k][1]) for bar, k in seen.links]
     if edges:
-        start, end = (max(edges), web.z0), (web.x1, web.z0)
-        line = bottom - kit.mm(5.5)
+        line = bottom - kit.mm(6.0)
+        start, end = (max(edges), line + kit.mm(EXTENSION)), (web.x1, line + kit.mm(EXTENSION))
         yield Dimension(start=start, end=end, line=line, text="<> cover")
