@@ -213,20 +213,24 @@ def read_practice(root: Table) -> Practice:
 
 
 def _assume_practice(log: Log, table: Table, practice: Practice) -> None:
-    words = {
+    fixing = {
         "needle": f"needle {practice.needle:g}",
         "shaft": f"shaft {practice.shaft[0]:g} × {practice.shaft[1]:g}",
-        "link_step": f"link step {practice.link_step:g}",
-        "cut_step": f"cut step {practice.cut_step:g}",
-        "length_step": f"length step {practice.length_step:g}",
         "first_link": f"first link {practice.first_link:g}",
-        "layer_gap": "layer gap by the code",
+        "link_step": f"link spacings in steps of {practice.link_step:g}",
+    }
+    steel = {
+        "cut_step": f"cut-offs to {practice.cut_step:g}",
+        "length_step": f"lengths to {practice.length_step:g}",
         "spacer_size": f"spacers T{practice.spacer_size}",
         "spacer_pitch": f"spacers each {practice.spacer_pitch:g}",
     }
-    left = [text for key, text in words.items() if key not in table]
-    if left:
-        log.assume("", f"Office defaults: {', '.join(left)} mm.")
+    for words in (fixing, steel):
+        left = [text for key, text in words.items() if key not in table]
+        if left:
+            log.assume("", f"Office default [mm]: {', '.join(left)}.")
+    if "layer_gap" not in table:
+        log.assume("", "Layers as near as the code allows.")
 
 
 def read_grid(root: Table) -> Grid:

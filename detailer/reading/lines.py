@@ -5,6 +5,8 @@ from __future__ import annotations
 from collections.abc import Mapping
 from typing import TYPE_CHECKING, TypeAlias
 
+import tomli
+
 if TYPE_CHECKING:
     from tree_sitter import Node
 
@@ -25,8 +27,21 @@ def printed(path: KeyPath) -> str:
         if isinstance(part, int):
             text += f"[{part + 1}]"
         else:
-            text += f".{part}" if text else part
+            name = plain(part)
+            text += f".{name}" if text else name
     return text or "the file"
+
+
+def plain(text: str) -> str:
+    """Return a text from a file fit for a terminal: short, and without control characters.
+
+    Parameters
+    ----------
+    text : str
+        Whatever was written.
+    """
+    shown = "".join(letter if letter.isprintable() else "?" for letter in text.strip())
+    return shown if len(shown) <= 40 else f"{shown[:39]}…"
 
 
 def line_of(lines: Mapping[KeyPath, int], path: KeyPath) -> int | None:
@@ -129,4 +144,4 @@ def _keys(node: Node) -> list[str]:
     if node.type == "dotted_key":
         return [key for child in node.named_children for key in _keys(child)]
     text = (node.text or b"").decode("utf-8", "replace")
-    return [text.strip("\"'") if node.type == "quoted_key" else text]
+    return list(tomli.loads(f"{text} = 0")) if node.type == "quoted_key" else [text]

@@ -137,9 +137,10 @@ def sign_of_doubt(text: str) -> bool:
 def _plain(text: str, remedy: str) -> str:
     if len(text) > LONGEST:
         raise NotationError(f"{len(text)} characters for a group of bars", remedy)
-    if not text.isprintable():
+    plain = text.translate(_ALIKE)
+    if not plain.isprintable():
         raise NotationError("a control character among the bars", remedy)
-    return text.translate(_ALIKE).upper().strip()
+    return plain.upper().strip()
 
 
 def _shown(text: str) -> str:

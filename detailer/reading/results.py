@@ -8,7 +8,7 @@ from itertools import pairwise
 from pathlib import Path
 
 from detailer.model import HandResults, Loads, PointLoad, Results, Span, Station, Stations
-from detailer.reading.stations import SAME_PLACE, Row, read_stations
+from detailer.reading.stations import SAME_PLACE, Row, is_workbook, read_stations
 from detailer.reading.table import Table
 
 REACHES = 1.0
@@ -71,6 +71,9 @@ def _loads(table: Table) -> Loads:
 def with_results(beam: Table, spans: Sequence[Span], folder: Path, member: str) -> tuple[Span, ...]:
     """Return the spans with the results of the beam's table, and of one form only."""
     named = "results" in beam
+    if named and is_workbook(beam.data["results"]):
+        beam.refuse("results", "results in a workbook are not built yet", "Save the table as CSV")
+        return tuple(spans)
     for span in spans:
         if named and span.results is not None:
             beam.refuse("results", f"a table beside the results of span {span.number}",

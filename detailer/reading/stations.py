@@ -11,7 +11,7 @@ from difflib import get_close_matches
 from pathlib import Path
 
 from detailer.model import Station
-from detailer.reading.lines import KeyPath
+from detailer.reading.lines import KeyPath, plain
 from detailer.reading.table import Log
 
 SAME_PLACE = 0.5
@@ -73,29 +73,49 @@ def read_stations(log: Log, path: KeyPath, folder: Path, name: str) -> tuple[Row
     text = _text(log, path, folder, name)
     if text is None:
         return ()
-    head = text.split("\n", 1)[0]
-    mark = ";" if ";" in head and "," not in head else "\t" if "\t" in head else ","
-    lines = list(csv.reader(io.StringIO(text), delimiter=mark))
-    if not lines:
-        log.refuse(path, f"{name} is empty", "Write a heading and one row a station")
-        return ()
-    headings = _headings(log, name, lines[0])
+    cells = _cells(log, path, name, text)
+    headings = _headings(log, name, cells[0][1]) if cells else None
     if headings is None:
         return ()
-    rows = []
-    for line, cells in enumerate(lines[1:], 2):
-        if any(cell.strip() for cell in cells):
-            row = _row(log, name, line, headings, cells)
-            if row is not None:
-                rows.append(row)
-    return tuple(rows)
+    rows = (
+        _row(log, name, line, headings, row)
+        for line, row in cells[1:]
+        if any(cell.strip() for cell in row)
+    )
+    return tuple(row for row in rows if row is not None)
+
+
+def _cells(log: Log, path: KeyPath, name: str, text: str) -> list[tuple[int, list[str]]]:
+    """Return the cells of every row and its line; none where this is no table."""
+    head = text.split("\n", 1)[0]
+    mark = ";" if ";" in head and "," not in head else "\t" if "\t" in head else ","
+    reader = csv.reader(io.StringIO(text), delimiter=mark)
+    cells: list[tuple[int, list[str]]] = []
+    try:
+        for row in reader:
+            cells.append((reader.line_num, row))
+    except csv.Error:
+        log.refuse(path, f"{name} is not a table", "Save it as CSV")
+        return []
+    if not cells:
+        log.refuse(path, f"{name} is empty", "Write a heading and one row a station")
+    return cells
+
+
+def is_workbook(name: object) -> bool:
+    """Return whether a table's name is a workbook's.
+
+    Parameters
+    ----------
+    name : object
+        As written in the project file.
+    """
+    return str(name).lower().endswith((".xlsx", ".xlsm", ".xls", ".ods"))
 
 
 def _text(log: Log, path: KeyPath, folder: Path, name: str) -> str | None:
     file = Path(name)
-    if file.suffix.lower() in (".xlsx", ".xls", ".ods"):
-        log.refuse(path, "results in a workbook are not built yet", "Save the table as CSV")
-    elif file.is_absolute() or ".." in file.parts or "\\" in name or ":" in name:
+    if file.is_absolute() or ".." in file.parts or "\\" in name or ":" in name:
         log.refuse(path, "a table elsewhere", "Put the table beside the project file")
     else:
         try:
@@ -119,11 +139,11 @@ def _headings(log: Log, name: str, cells: Sequence[str]) -> tuple[Heading, ...] 
     for cell in cells:
         heading, slip = _heading(cell)
         if slip is not None:
-            log.refuse_row(name, 1, cell.strip()[:40] or "an empty heading", slip)
+            log.refuse_row(name, 1, plain(cell) or "an empty heading", slip)
             sound = False
         if heading is not None:
             if any(heading.field == other.field for other in found):
-                log.refuse_row(name, 1, cell.strip(), ("a column twice", "Write it once"))
+                log.refuse_row(name, 1, plain(cell), ("a column twice", "Write it once"))
                 sound = False
             found.append(heading)
     fields = {heading.field for heading in found}
@@ -144,7 +164,7 @@ def _heading(cell: str) -> tuple[Heading | None, tuple[str, str] | None]:
     match = HEADING.fullmatch(cell)
     title = " ".join(match[1].lower().replace("_", " ").split()) if match else ""
     if title == "span":
-        return Heading("span", 1.0, cell.strip()), None
+        return Heading("span", 1.0, plain(cell)), None
     if match is None or title not in COLUMNS:
         names = [*COLUMNS, "span"]
         near = get_close_matches(title, names, n=1, cutoff=0.6)
@@ -155,11 +175,11 @@ def _heading(cell: str) -> tuple[Heading | None, tuple[str, str] | None]:
     unit = re.sub(r"[\s·.\-*]", "", match[2] or "").lower()
     allowed = {"x": "m or mm", "v": "kN or N"}.get(title[0], "kN m or N mm")
     if unit in units:
-        return Heading(field, units[unit], cell.strip()), None
+        return Heading(field, units[unit], plain(cell)), None
     if unit == "":
         return None, ("no unit", f"Write the unit in brackets, {allowed}")
     if unit in FOREIGN:
-        return None, (f"the unit {match[2]} is not read", f"Convert the column to {allowed}")
+        return None, (f"the unit {plain(match[2])} is not read", f"Convert the column to {allowed}")
     return None, ("a unit that does not fit", f"Write {allowed} in brackets")
 
 

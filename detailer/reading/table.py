@@ -14,7 +14,7 @@ from typing import Any, TypeVar
 
 from detailer.errors import InputError, Refused
 from detailer.model import Assumption, Doubt
-from detailer.reading.lines import KeyPath, find_lines, line_of, printed
+from detailer.reading.lines import KeyPath, find_lines, line_of, plain, printed
 from detailer.reading.outside import OUTSIDE
 
 T = TypeVar("T")
@@ -24,6 +24,9 @@ MARK = re.compile(r"[A-Za-z0-9](?:[A-Za-z0-9]|[-./](?=[A-Za-z0-9])){0,23}", re.A
 
 LONGEST_TEXT = 120
 """No text of a title block is longer than this. [characters]"""
+
+BEYOND_MEASURE = 1e15
+"""Nothing is as large as this in any unit."""
 
 
 class Log:
@@ -110,9 +113,8 @@ class Table:
             self.refuse(key, *OUTSIDE[key])
             return
         near = get_close_matches(key.lower(), names, n=1, cutoff=0.6)
-        shown = key if key.isprintable() and len(key) <= 40 else "what is written"
         remedy = f"Did you mean {near[0]}?" if near else f"Known here: {', '.join(names)}"
-        self.refuse(key, f"unknown key {shown}", remedy)
+        self.refuse(key, f"unknown key {plain(key)}", remedy)
 
     def __contains__(self, key: str) -> bool:
         return key in self.data
@@ -181,11 +183,11 @@ class Table:
         asked = f"{low:.10g} to {high:.10g} {unit}".rstrip()
         if isinstance(value, bool) or not isinstance(value, int | float):
             self.log.refuse(path, "not a number", f"Write a number, {asked}")
+        elif abs(value) > BEYOND_MEASURE:
+            self.log.refuse(path, "a number beyond measure", f"Write {asked}")
         elif not low <= value <= high:
-            shown = f"{float(value):.10g}" if abs(value) < 1e300 else "a number beyond measure"
-            self.log.refuse(
-                path, f"{shown} {unit}".rstrip() + " cannot be", _suggest(value, low, high, asked)
-            )
+            shown = f"{float(value):.10g} {unit}".rstrip()
+            self.log.refuse(path, f"{shown} cannot be", _suggest(value, low, high, asked))
         else:
             return float(value)
         return math.nan

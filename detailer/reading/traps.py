@@ -154,7 +154,7 @@ def _signs(table: Table, beam: Beam) -> None:
             "no moment is hogging, not even over the inner supports: signs are lost",
             "Write sagging positive and hogging negative",
         )
-    elif all(p.most <= 0 and p.least < 0 for p in mid) and all(p.least >= 0 for p in over):
+    elif sum(p.most + p.least for p in mid) < 0 and all(p.least >= 0 for p in over):
         table.log.doubt(
             path, "supports sag and midspans hog: are all signs turned over? Sagging is positive"
         )
