@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import re
+from dataclasses import asdict
 from pathlib import Path
 from typing import Any
 
@@ -63,14 +64,7 @@ def read_project(path: Path) -> Project:
     beams = read_beams(root, around)
     assumptions, doubts = log.finish()
     return Project(
-        number=header.number,
-        title=header.title,
-        part=header.part,
-        owner=header.owner,
-        code=header.code,
-        bending=header.bending,
-        ductile=header.ductile,
-        lateral=header.lateral,
+        **asdict(header),
         issue=issue,
         concrete=concrete,
         steel=steel,
