@@ -3,61 +3,18 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from itertools import pairwise
-from typing import TypeAlias
 
-from detailer.drawing.primitives import Align, Dimension, Disc, Path, Pen, Primitive
+from detailer.drawing.primitives import Align, Disc, Path, Pen, Primitive
 from detailer.model import Beam
 from detailer.values import Face, SupportKind
+from detailer.views.cutoffs import ROW, at_face, chain, cut_items, cut_lines
 from detailer.views.elevation import SIDES, Stage, call_outs
 from detailer.views.kit import TEXT, Kit
 from detailer.views.labels import Wish, set_row
-from detailer.views.stops import laps_of, rows_of, stops_between
 from detailer.views.zones import Zone, link_sets, zones_between
-
-ROW = 6.0
-"""From one dimension line to the next. [mm on paper]"""
-
-EXTENSION = 2.0
-"""Length of an extension line that does not reach the beam. [mm on paper]"""
 
 BUBBLE = 3.5
 """Radius of a support's name. [mm on paper]"""
-
-Row: TypeAlias = tuple[tuple[float, str], ...]
-"""Stops of a chain, each with what lies to its right."""
-
-
-def chain(
-    stops: tuple[float, ...],
-    line: float,
-    kit: Kit,
-    *,
-    starts: tuple[float, ...] | None = None,
-    texts: tuple[str, ...] = (),
-) -> Iterator[Dimension]:
-    """Yield dimensions from stop to stop, at whole millimetres so that they close.
-
-    Parameters
-    ----------
-    stops : tuple of float
-        x, ascending; those within a millimetre of the one before are left out. [mm]
-    line : float
-        y of the dimension line. [mm]
-    kit : Kit
-        Member and scale.
-    starts : tuple of float, optional
-        y where the extension line of each stop begins; just above the line if absent. [mm]
-    texts : tuple of str, optional
-        Text of each dimension; its distance if absent or empty.
-    """
-    lead = line + kit.mm(EXTENSION)
-    ends = starts if starts is not None else (lead,) * len(stops)
-    points = [(float(round(x)), y) for x, y in zip(stops, ends, strict=True)]
-    for i, (a, b) in enumerate(pairwise(points)):
-        if b[0] - a[0] >= 1.0:
-            text = texts[i] if i < len(texts) else ""
-            yield Dimension(start=a, end=b, line=line, text=text, height=TEXT)
 
 
 def elevation_items(stage: Stage, beam: Beam) -> Iterator[Primitive]:
@@ -71,50 +28,14 @@ def elevation_items(stage: Stage, beam: Beam) -> Iterator[Primitive]:
         What its supports are.
     """
     for above, faces in ((True, (Face.TOP,)), (False, (Face.BOTTOM, *SIDES))):
-        lines = _cut_lines(stage, faces)
+        lines = cut_lines(stage, faces)
         stops = {x for rows in lines for row in rows for x, _ in row}
-        crossing = tuple(sorted(x for x in stops if not _at_face(stage, x)))
+        crossing = tuple(sorted(x for x in stops if not at_face(stage, x)))
         texts, reach = call_outs(stage, above=above, blocked=crossing)
         yield from texts
-        way = 1 if above else -1
-        line = reach + way * stage.kit.mm(ROW - 1.5 if above else ROW)
-        for rows in lines:
-            for row in rows:
-                yield from _cut_row(stage, row, line, above=above)
-            line += way * stage.kit.mm(ROW)
+        dimensions, line = cut_items(stage, lines, reach, above=above)
+        yield from dimensions
     yield from _below(stage, beam, line)
-
-
-def _at_face(stage: Stage, x: float) -> bool:
-    return any(abs(x - edge) < 1.0 for pair in (*stage.clear, *stage.supports) for edge in pair)
-
-
-def _cut_lines(stage: Stage, faces: tuple[Face, ...]) -> tuple[tuple[Row, ...], ...]:
-    """Return the chains of cut-offs and laps, those that share no stretch on one line."""
-    laps = laps_of(stage.cage, stage.strands, faces)
-    rows: list[Row] = []
-    for x0, x1 in stage.clear:
-        stops = stops_between(stage.strands, laps, faces, x0, x1)
-        rows += [row for row in rows_of((x0, x1), stops, laps) if row not in rows]
-    lines: list[list[Row]] = []
-    for row in rows:
-        for line in lines:
-            if all(row[0][0] >= r[-1][0] - 1.0 or row[-1][0] <= r[0][0] + 1.0 for r in line):
-                line.append(row)
-                break
-        else:
-            lines.append([row])
-    return tuple(tuple(line) for line in lines)
-
-
-def _cut_row(stage: Stage, row: Row, line: float, *, above: bool) -> Iterator[Dimension]:
-    """Yield one chain; the extension lines of stops reach the beam, those of faces do not."""
-    kit = stage.kit
-    short = line + (-1 if above else 1) * kit.mm(EXTENSION)
-    near = stage.high + kit.mm(1.0) if above else stage.low - kit.mm(1.0)
-    starts = tuple(short if _at_face(stage, x) else near for x, _ in row)
-    texts = tuple("<> lap" if kind == "lap" else "" for _, kind in row)
-    yield from chain(tuple(x for x, _ in row), line, kit, starts=starts, texts=texts)
 
 
 def _below(stage: Stage, beam: Beam, line: float) -> Iterator[Primitive]:

@@ -29,6 +29,15 @@ class Cut:
     x: float
 
 
+@dataclass(frozen=True, slots=True)
+class _Place:
+    """Where a section might be cut; `wanted` ones are, however equal to another."""
+
+    span: int
+    x: float
+    wanted: bool
+
+
 def cuts_of(cage: Cage, clear: tuple[tuple[float, float], ...]) -> tuple[Cut, ...]:
     """Return where a beam is cut, from left to right.
 
@@ -41,14 +50,16 @@ def cuts_of(cage: Cage, clear: tuple[tuple[float, float], ...]) -> tuple[Cut, ..
     """
     letters: dict[object, str] = {}
     found: list[Cut] = []
-    places = sorted(_places(cage, clear))
-    for wanted in (True, False):
-        for x, _ in (p for p in places if p[1] is wanted):
-            seen = signature(cage, x)
-            if seen in letters and not wanted:
-                continue
-            letters.setdefault(seen, "")
-            found.append(Cut("", x))
+    shown: set[tuple[int, object]] = set()
+    places = sorted(_places(cage, clear), key=lambda p: (not p.wanted, p.x))
+    for place in places:
+        seen = signature(cage, place.x)
+        same = place.span, _stock(cage, place.x)
+        if not place.wanted and (seen in letters or same in shown):
+            continue
+        letters.setdefault(seen, "")
+        shown.add(same)
+        found.append(Cut("", place.x))
     for cut in sorted(found, key=lambda c: c.x):
         seen = signature(cage, cut.x)
         if not letters[seen]:
@@ -91,19 +102,28 @@ def signature(cage: Cage, x: float) -> object:
     return shape, bars, links
 
 
-def _places(cage: Cage, clear: tuple[tuple[float, float], ...]) -> Iterator[tuple[float, bool]]:
-    """Yield where to cut and whether it is asked for however equal to another."""
+def _stock(cage: Cage, x: float) -> object:
+    """Return which bars are cut, wherever across the beam they lie."""
+    bars = (c.bar for c in bars_at(cage, x) if c.square)
+    return tuple(sorted((bar.name, bar.face.value, bar.layer) for bar in bars))
+
+
+def _places(cage: Cage, clear: tuple[tuple[float, float], ...]) -> Iterator[_Place]:
+    """Yield every place that a section might show; a bar moved by its crank alone is none."""
     events = sorted(set(_events(cage)))
-    for x0, x1 in clear:
+    faces = [edge for s in cage.supports for edge in (s.x - s.width / 2, s.x + s.width / 2)]
+    for span, (x0, x1) in enumerate(clear):
         stops = [x0, *(x for x in events if x0 + 1 < x < x1 - 1), x1]
         middle = (x0 + x1) / 2
         for a, b in pairwise(stops):
             if a <= middle < b:
-                yield middle if _level_at(cage, middle) else (a + b) / 2, True
+                yield _Place(span, middle if _level_at(cage, middle) else (a + b) / 2, True)
             elif b - a >= SHORT and _level_at(cage, (a + b) / 2):
-                yield (a + b) / 2, False
-        yield x0 + min(FROM_FACE, (stops[1] - x0) / 2), True
-        yield x1 - min(FROM_FACE, (x1 - stops[-2]) / 2), True
+                yield _Place(span, (a + b) / 2, False)
+        if any(abs(x0 - face) < 1.0 for face in faces):
+            yield _Place(span, x0 + min(FROM_FACE, (stops[1] - x0) / 2), True)
+        if any(abs(x1 - face) < 1.0 for face in faces):
+            yield _Place(span, x1 - min(FROM_FACE, (x1 - stops[-2]) / 2), True)
 
 
 def _events(cage: Cage) -> Iterator[float]:

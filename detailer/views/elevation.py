@@ -180,12 +180,14 @@ def _cut_marks(stage: Stage) -> Iterator[Primitive]:
     kit = stage.kit
     for cut in stage.cuts:
         for edge, way in ((stage.high, 1), (stage.low, -1)):
-            near, far = edge + way * kit.mm(0.8), edge + way * kit.mm(4.6)
+            near, far = edge + way * kit.mm(0.8), edge + way * kit.mm(5.2)
             yield kit.line((cut.x, near), (cut.x, far), pen=Pen.FRAME)
             side = letter_side(stage, cut)
-            base = (near + far) / 2 - kit.mm(TITLE / 2)
+            foot = (cut.x + kit.mm(1.8), far)
+            yield kit.line((cut.x, far), foot, pen=Pen.BAR)
+            base = near if way > 0 else near - kit.mm(TITLE)
             align = Align.LEFT if side > 0 else Align.RIGHT
-            at = (cut.x + side * kit.mm(0.9), base)
+            at = (cut.x + side * kit.mm(1.0), base)
             yield kit.text(at, cut.letter, height=TITLE, align=align, bold=True)
 
 

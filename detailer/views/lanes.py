@@ -16,7 +16,10 @@ APART = 1.2
 """Least distance of the axes of two bars that overlap. [mm on paper]"""
 
 ALIKE = 1.0
-"""Bars whose lines agree within this are one line. [mm]"""
+"""Bars whose ends agree within this may be one line. [mm]"""
+
+SEATED = 8.0
+"""A corner bar that sits no further in than this is one line with its neighbours. [mm]"""
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -95,25 +98,24 @@ def _outer_first(strand: Strand) -> tuple[object, ...]:
 
 
 def _lines(cage: Cage) -> list[Strand]:
-    """Return one strand for all real bars of one mark on one line."""
-    lines: dict[tuple[object, ...], Strand] = {}
+    """Return one strand for all real bars of one mark that an elevation shows on one line."""
+    lines: dict[tuple[object, ...], list[Strand]] = {}
     for bar in cage.bars:
         if bar.role in (Role.LINK, Role.TIE, Role.SPACER):
             continue
         trace = elevation_trace(bar)
+        face = Face.LEFT if bar.face is Face.RIGHT else bar.face
         for dx, _, dz in bar.placings:
             here = trace.moved(dx, dz)
-            ends = (here.points[0], here.points[-1])
-            face = Face.LEFT if bar.face is Face.RIGHT else bar.face
-            spots = tuple(sorted((round(x / ALIKE), round(z / ALIKE)) for x, z in ends))
-            key = (bar.name, face, bar.layer, spots, round(_level(here)))
-            known = lines.get(key)
-            lines[key] = (
-                replace(known, count=known.count + 1)
-                if known
-                else Strand(bar=bar, count=1, true=here, drawn=here)
-            )
-    return list(lines.values())
+            ends = round(here.low[0] / ALIKE), round(here.high[0] / ALIKE)
+            alike = lines.setdefault((bar.name, face, bar.layer, *ends), [])
+            for i, known in enumerate(alike):
+                if abs(known.level - _level(here)) <= SEATED:
+                    alike[i] = replace(known, count=known.count + 1)
+                    break
+            else:
+                alike.append(Strand(bar=bar, count=1, true=here, drawn=here))
+    return [strand for alike in lines.values() for strand in alike]
 
 
 def _lane(

@@ -7,7 +7,7 @@ from dataclasses import dataclass
 
 from detailer.drawing.primitives import Align, Path, Pen, Primitive
 from detailer.values import Face
-from detailer.views.chains import chain
+from detailer.views.cutoffs import chain
 from detailer.views.elevation import Stage
 from detailer.views.kit import TEXT, Kit, call_out
 from detailer.views.lanes import Strand

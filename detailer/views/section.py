@@ -22,7 +22,7 @@ from detailer.views.zones import legs_of, link_size
 LEVEL = 6.0
 """Bars whose centres agree in height within this are one row. [mm]"""
 
-WING = 7.0
+WING = 5.0
 """So much of a slab is shown beside the web. [mm on paper]"""
 
 SHELF = 4.2
@@ -31,7 +31,7 @@ SHELF = 4.2
 EXTENSION = 2.0
 """Length of an extension line that does not reach the concrete. [mm on paper]"""
 
-FAR = 5.5
+FAR = 4.5
 """From the concrete to a call-out. [mm on paper]"""
 
 
@@ -244,29 +244,42 @@ def _call_outs(cage: Cage, seen: Slice, web: Web, kit: Kit) -> Iterator[Primitiv
         top = row[0].bars[0].bar.face is Face.TOP
         level = sum(c.z for g in row for c in g.bars) / sum(len(g.bars) for g in row)
         outer = row[0].bars[0].bar.layer == 1 and row[0].place
-        outside = [g for g in row if outer and _outermost(g, row)]
-        for group in outside[:1]:
-            yield from _fan(group, web, kit, above=top)
+        outside = _outside(row) if outer else ()
+        for group, side in outside:
+            yield from _fan(group, web, kit, side, above=top)
         way = -1 if top else 1
-        for i, group in enumerate(g for g in row if g not in outside[:1]):
-            mixed = len(row) > 1
+        named = [group for group, _ in outside]
+        mixed = len(row) > 1
+        for i, group in enumerate(g for g in row if g not in named):
             shelves.append((group, level, way * kit.mm(2.6) * (1 + i) if mixed else 0.0))
     yield from _shelves(tuple(shelves), cage, seen, web, kit)
 
 
-def _outermost(group: Group, row: tuple[Group, ...]) -> bool:
-    """Return whether a group holds both outer bars of its row, or is alone in it."""
-    xs = [x for g in row for x, _ in g.points]
-    mine = [x for x, _ in group.points]
-    return min(mine) == min(xs) and max(mine) == max(xs)
+def _outside(row: tuple[Group, ...]) -> tuple[tuple[Group, int], ...]:
+    """Return the groups named above or below the concrete, and on which side of its middle.
+
+    One that holds both outer bars stands in the middle; otherwise those of the left and of
+    the right outer bar stand side by side, if all bars of one lie left of the other's.
+    """
+    spread = [(min(x for x, _ in g.points), max(x for x, _ in g.points)) for g in row]
+    left = min(range(len(row)), key=lambda i: spread[i][0])
+    right = max(range(len(row)), key=lambda i: spread[i][1])
+    if left == right:
+        return ((row[left], 0),)
+    if spread[left][1] < spread[right][0]:
+        return (row[left], -1), (row[right], 1)
+    return ((row[left], -1),) if len(row[left].bars) <= len(row[right].bars) else ((row[right], 1),)
 
 
-def _fan(group: Group, web: Web, kit: Kit, *, above: bool) -> Iterator[Primitive]:
+def _fan(group: Group, web: Web, kit: Kit, side: int, *, above: bool) -> Iterator[Primitive]:
     """Yield a call-out above or below the concrete, with a leader to each of its bars."""
     tag = kit.tag(group.bars[0].bar)
     edge = web.z1 + kit.mm(FAR) if above else web.z0 - kit.mm(FAR + TEXT)
-    middle = (web.x0 + web.x1) / 2
-    start = (middle, edge - kit.mm(0.7) if above else edge + kit.mm(TEXT + 0.7))
+    half = kit.width(group.text) / 2
+    middle = (web.x0 + web.x1) / 2 + side * (half + kit.mm(1.0))
+    nearest = (web.x0 if side < 0 else web.x1) if side else middle
+    start_x = min(max(nearest, middle - half), middle + half)
+    start = (start_x, edge - kit.mm(0.7) if above else edge + kit.mm(TEXT + 0.7))
     yield kit.text((middle, edge), group.text, tag=tag)
     for point in group.points:
         yield from kit.leader(start, point, tag=tag)
@@ -278,7 +291,7 @@ def _shelves(
     """Yield the call-outs at the right, then links and spacers at the left."""
     wishes = sorted(shelves, key=lambda s: -(s[1] + s[2]))
     levels = _spread(tuple(level + step for _, level, step in wishes), kit.mm(SHELF))
-    edge = web.x1 + kit.mm(max(FAR, WING + 2.0 if _slab(seen, web) else 0.0))
+    edge = web.x1 + kit.mm(_beside(seen, web, 1))
     for (group, level, step), at in zip(wishes, levels, strict=True):
         tag = kit.tag(group.bars[0].bar)
         yield kit.text((edge, at - kit.mm(TEXT / 2)), group.text, align=Align.LEFT, tag=tag)
@@ -294,9 +307,11 @@ def _shelves(
     yield from _left_side(cage, seen, web, kit)
 
 
-def _slab(seen: Slice, web: Web) -> bool:
-    x0, _, x1, _ = seen.outline.bounds
-    return bool(-x0 > web.x1 + 1.0 or -x1 < web.x0 - 1.0)
+def _beside(seen: Slice, web: Web, side: int) -> float:
+    """Return how far from the web call-outs stand: beyond the slab, if there is one."""
+    y0, _, y1, _ = seen.outline.bounds
+    slab = -y0 > web.x1 + 1.0 if side > 0 else -y1 < web.x0 - 1.0
+    return WING + 2.0 if slab else FAR
 
 
 def _spread(levels: tuple[float, ...], step: float) -> tuple[float, ...]:
@@ -310,7 +325,7 @@ def _spread(levels: tuple[float, ...], step: float) -> tuple[float, ...]:
 
 def _left_side(cage: Cage, seen: Slice, web: Web, kit: Kit) -> Iterator[Primitive]:
     """Yield the call-outs of links and spacers at the left of the web."""
-    edge = web.x0 - kit.mm(FAR + 6.5)
+    edge = web.x0 - kit.mm(_beside(seen, web, -1))
     named = _named_left(cage, seen, kit)
     levels = _spread(tuple(n[0] for n in named), kit.mm(SHELF))
     for (z, x, text, bar), at in zip(named, levels, strict=True):
@@ -352,8 +367,8 @@ def _named_left(cage: Cage, seen: Slice, kit: Kit) -> list[tuple[float, float, s
 
 def _dimensions(seen: Slice, web: Web, kit: Kit, words: float) -> Iterator[Primitive]:
     """Yield width, depth outside the words at the left, and the cover to the links."""
-    bottom = web.z0 - kit.mm(FAR + TEXT + 6.0)
-    left = web.x0 - kit.mm(FAR + 6.5 + 3.0) - words
+    bottom = web.z0 - kit.mm(FAR + TEXT + 5.0)
+    left = web.x0 - kit.mm(_beside(seen, web, -1) + 2.0) - words
     short = bottom + kit.mm(EXTENSION)
     yield Dimension(start=(web.x0, short), end=(web.x1, short), line=bottom)
     yield Dimension(start=(web.x0, web.z0), end=(web.x0, web.z1), line=left, vertical=True)

@@ -31,6 +31,9 @@ from detailer.views.table import Table, table_items, table_of
 SECTION_SCALES = (10.0, 15.0, 20.0)
 """Scales of sections, the largest picture first."""
 
+MOST_GROUPS = 3
+"""Sections may stand in so many groups on a sheet."""
+
 NOTE_WIDTHS = (185.0, 150.0, 120.0, 95.0)
 """Widths notes may be set in. [mm on paper]"""
 
@@ -286,25 +289,41 @@ def _blocks(
 ) -> tuple[tuple[Placed, ...], tuple[Primitive, ...]] | None:
     """Return sections, schedule and notes where they have a place beside what is fixed."""
     views = content.sections(scale)
-    sizes = tuple(size_of(v) for v in views)
-    wide = space.x1 - space.x0
-    groups = [row for share in GROUP_WIDTHS if (row := set_rows(sizes, share * wide)) is not None]
-    texts = content.texts
     member = content.beam.mark
-    choices = (
-        tuple(row.size for row in groups),
-        (content.table.size,),
-        tuple((w, t.height) for w, t in _notes(content)),
-    )
-    found = pack(space, fixed, choices)
-    if found is None:
-        return None
-    (group, corner), (_, table_at), (text, notes_at) = found
-    items = (
-        *table_items(content.table, table_at, member),
-        *note_items(texts[text], notes_at, member),
-    )
-    return tuple(_in_rows(views, groups[group], corner)), items
+    for parts in range(1, MOST_GROUPS + 1):
+        size = -(-len(views) // parts)
+        groups = [views[i : i + size] for i in range(0, len(views), size)]
+        rows = [_row_choices(group, space) for group in groups]
+        choices = (
+            (content.table.size,),
+            tuple((w, t.height) for w, t in _notes(content)),
+            *(tuple(row.size for row in row_choices) for row_choices in rows),
+        )
+        found = pack(space, fixed, choices)
+        if found is None:
+            continue
+        (_, table_at), (text, notes_at), *spots = found
+        items = (
+            *table_items(content.table, table_at, member),
+            *note_items(content.texts[text], notes_at, member),
+        )
+        placed = (
+            each
+            for group, row, (i, at) in zip(groups, rows, spots, strict=True)
+            for each in _in_rows(group, row[i], at)
+        )
+        return tuple(placed), items
+    return None
+
+
+def _row_choices(views: tuple[View, ...], space: Room) -> list[Row]:
+    sizes, wide = tuple(size_of(v) for v in views), space.x1 - space.x0
+    rows = (set_rows(sizes, share * wide) for share in GROUP_WIDTHS)
+    found: list[Row] = []
+    for row in rows:
+        if row is not None and row.size not in [r.size for r in found]:
+            found.append(row)
+    return found
 
 
 def _in_rows(views: tuple[View, ...], row: Row, corner: XY) -> Iterator[Placed]:

@@ -12,6 +12,9 @@ from detailer.views.lanes import Strand
 NEAR = 1.0
 """Ends closer than this are one end. [mm]"""
 
+AT_TIP = 60.0
+"""A bar that stops this close to the end of all steel goes to the end of the beam. [mm]"""
+
 
 @dataclass(frozen=True, slots=True, order=True)
 class Lap:
@@ -23,6 +26,8 @@ class Lap:
 
 def laps_of(cage: Cage, strands: tuple[Strand, ...], faces: tuple[Face, ...]) -> tuple[Lap, ...]:
     """Return the laps of bars at some faces, from left to right, equal ones once.
+
+    Bars of neighbouring spans that pass each other over a support are no lap.
 
     Parameters
     ----------
@@ -45,7 +50,9 @@ def laps_of(cage: Cage, strands: tuple[Strand, ...], faces: tuple[Face, ...]) ->
             continue
         if first[0] > second[0]:
             first, second = second, first
-        if first[1] < second[1] - NEAR and second[0] > first[0] + NEAR:
+        middle = (contact.x0 + contact.x1) / 2
+        over = any(abs(middle - s.x) <= s.width / 2 for s in cage.supports)
+        if not over and first[1] < second[1] - NEAR and second[0] > first[0] + NEAR:
             found.add(Lap(float(round(contact.x0)), float(round(contact.x1))))
     return tuple(sorted(found))
 
@@ -83,11 +90,12 @@ def stops_between(
     """
     left: set[float] = set()
     right: set[float] = set()
+    start, end = min(s.x0 for s in strands), max(s.x1 for s in strands)
     for s in strands:
         if s.bar.face not in faces:
             continue
         for x in _ends(s, laps):
-            if x0 + NEAR < x < x1 - NEAR:
+            if x0 + NEAR < x < x1 - NEAR and start + AT_TIP < x < end - AT_TIP:
                 (left if x - x0 <= x1 - x else right).add(float(round(x)))
     return tuple(sorted(left)), tuple(sorted(right, reverse=True))
 
