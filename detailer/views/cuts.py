@@ -9,7 +9,7 @@ from itertools import pairwise
 from detailer.cage.bar import Cage
 from detailer.cage.cut import bars_at, links_at, outline_at
 from detailer.cage.line import Straight, centre_line
-from detailer.values import Role
+from detailer.values import ContactKind, Role
 
 FROM_FACE = 150.0
 """A section at a face is cut this far inside the span, before the first change. [mm]"""
@@ -40,6 +40,9 @@ class _Place:
 
 def cuts_of(cage: Cage, clear: tuple[tuple[float, float], ...]) -> tuple[Cut, ...]:
     """Return where a beam is cut, from left to right.
+
+    At faces and at midspan always; elsewhere where a lap, or another set of sizes, is not
+    yet shown in that span.
 
     Parameters
     ----------
@@ -103,13 +106,19 @@ def signature(cage: Cage, x: float) -> object:
 
 
 def _stock(cage: Cage, x: float) -> object:
-    """Return which bars are cut, wherever across the beam they lie."""
+    """Return the sizes cut at each face and layer, and the laps they are cut in."""
     bars = (c.bar for c in bars_at(cage, x) if c.square)
-    return tuple(sorted((bar.name, bar.face.value, bar.layer) for bar in bars))
+    sizes = tuple(sorted((bar.face.value, bar.layer, bar.dia) for bar in bars))
+    laps = tuple(
+        (contact.a, contact.b)
+        for contact in cage.contacts
+        if contact.kind is ContactKind.LAP and contact.x0 < x < contact.x1
+    )
+    return sizes, tuple(sorted(laps))
 
 
 def _places(cage: Cage, clear: tuple[tuple[float, float], ...]) -> Iterator[_Place]:
-    """Yield every place that a section might show; a bar moved by its crank alone is none."""
+    """Yield every place that a section might show."""
     events = sorted(set(_events(cage)))
     faces = [edge for s in cage.supports for edge in (s.x - s.width / 2, s.x + s.width / 2)]
     for span, (x0, x1) in enumerate(clear):

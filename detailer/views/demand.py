@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import numpy as np
+
 from detailer.cage.bar import Cage
 from detailer.model import Beam, Project
 from detailer.statics import Envelope
@@ -27,8 +29,8 @@ def curves_of(project: Project, beam: Beam, envelope: Envelope | None, cage: Cag
         return None
     xs: list[float] = []
     for span in beam.spans:
-        xs += [float(x) for x in envelope.sample(span.number, STEP)]
-    least, most = envelope.moments(xs)
+        xs += [float(x) for x in envelope.sample(span, STEP)]
+    least, most = envelope.moments(np.asarray(xs))
     return Curves(
         xs=tuple(xs),
         most=tuple(max(float(m), 0.0) for m in most),

@@ -143,10 +143,8 @@ def _peaks(stage: Stage, curves: Curves, scale: _Scale) -> Iterator[Primitive]:
         inside = [i for i, x in enumerate(curves.xs) if x0 - 1.0 <= x <= x1 + 1.0]
         if not inside:
             continue
-        half = len(inside) // 2
-        for part in (inside[:half], inside[half:]):
-            if part:
-                i = min(part, key=lambda i: (curves.least[i], i))
+        for i, face in ((inside[0], x0), (inside[-1], x1)):
+            if any(abs(face - edge) < 1.0 for pair in stage.supports for edge in pair):
                 above.append((curves.xs[i], curves.least[i]))
         i = max(inside, key=lambda i: (curves.most[i], -i))
         below.append((curves.xs[i], curves.most[i]))

@@ -201,10 +201,13 @@ def letter_side(stage: Stage, cut: Cut) -> int:
     cut : Cut
         The section.
     """
-    room = stage.kit.mm(5.0)
+    room, both = stage.kit.mm(5.0), stage.kit.mm(9.0)
     near_right = any(0 < x0 - cut.x < room for x0, _ in stage.supports)
-    crowded = any(0 < other.x - cut.x < room for other in stage.cuts)
-    return -1 if near_right or crowded else 1
+    after = min((o.x - cut.x for o in stage.cuts if o.x > cut.x), default=both)
+    before = min((cut.x - o.x for o in stage.cuts if o.x < cut.x), default=both)
+    if after < room or before < room:
+        return -1 if after < before else 1
+    return -1 if near_right or (after < both and before >= both) else 1
 
 
 def named_bars(stage: Stage) -> tuple[Named, ...]:

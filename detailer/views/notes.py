@@ -18,7 +18,7 @@ from detailer.views.lanes import Strand
 from detailer.views.outline import clear_spans
 from detailer.views.stops import laps_of
 
-LINE = 4.0
+LINE = 3.7
 """From one line of text to the next. [mm on paper]"""
 
 MOST_FINDINGS = 8

@@ -240,11 +240,13 @@ def _call_outs(cage: Cage, seen: Slice, web: Web, kit: Kit) -> Iterator[Primitiv
     """Yield call-outs in clock order: outermost rows above and below, the others at the sides."""
     rows = groups_of(seen)
     shelves: list[tuple[Group, float, float]] = []  # group, wanted height, step of its shelf
+    tops = [row for row in rows if row[0].bars[0].bar.face is Face.TOP]
+    lows = [row for row in rows if row[0].bars[0].bar.face is Face.BOTTOM]
+    ends = (*tops[:1], *lows[-1:])
     for row in rows:
         top = row[0].bars[0].bar.face is Face.TOP
         level = sum(c.z for g in row for c in g.bars) / sum(len(g.bars) for g in row)
-        outer = row[0].bars[0].bar.layer == 1 and row[0].place
-        outside = _outside(row) if outer else ()
+        outside = _outside(row) if row in ends else ()
         for group, side in outside:
             yield from _fan(group, web, kit, side, above=top)
         way = -1 if top else 1

@@ -37,9 +37,6 @@ MOST_GROUPS = 3
 NOTE_WIDTHS = (185.0, 150.0, 120.0, 95.0)
 """Widths notes may be set in. [mm on paper]"""
 
-GROUP_WIDTHS = (1.0, 0.75, 0.6, 0.45, 0.35)
-"""Widths the rows of sections may have, as shares of the paper."""
-
 AROUND = 10.0
 """A stack of views is at least so much wider than the beam. [mm on paper]"""
 
@@ -317,10 +314,12 @@ def _blocks(
 
 
 def _row_choices(views: tuple[View, ...], space: Room) -> list[Row]:
+    """Return sections in rows as long as the paper, then in shorter and shorter ones."""
     sizes, wide = tuple(size_of(v) for v in views), space.x1 - space.x0
-    rows = (set_rows(sizes, share * wide) for share in GROUP_WIDTHS)
+    each = max(w for w, _ in sizes)
     found: list[Row] = []
-    for row in rows:
+    for count in range(len(views), 0, -1):
+        row = set_rows(sizes, min(wide, count * (each + GAP) - GAP))
         if row is not None and row.size not in [r.size for r in found]:
             found.append(row)
     return found
