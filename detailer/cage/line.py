@@ -213,11 +213,22 @@ def centre_line(bar: Bar) -> CentreLine:
     bar : Bar
         The bar.
     """
-    return _line(bar.corners, bar.mandrels, bar.dia)
+    return line_through(bar.corners, bar.mandrels, bar.dia)
 
 
 @lru_cache(maxsize=8192)
-def _line(corners: tuple[Point, ...], mandrels: tuple[float, ...], dia: float) -> CentreLine:
+def line_through(corners: tuple[Point, ...], mandrels: tuple[float, ...], dia: float) -> CentreLine:
+    """Return the centre line of a bar given by its corners, as :func:`centre_line` does.
+
+    Parameters
+    ----------
+    corners : tuple of Point
+        Meeting points of the straight axes. [mm]
+    mandrels : tuple of float
+        Inner diameter of the bend at each inner corner. [mm]
+    dia : float
+        Diameter. [mm]
+    """
     nodes = _nodes(corners, mandrels, dia)
     pieces: list[Piece] = []
     here = nodes[0].at

@@ -2,11 +2,12 @@
 
 from __future__ import annotations
 
+from functools import lru_cache
 from math import atan2, pi, radians, sqrt
 from typing import NamedTuple
 
-from detailer.cage.bar import Bar, Cage
-from detailer.cage.line import Arc, centre_line
+from detailer.cage.bar import Bar, Cage, Point
+from detailer.cage.line import Arc, centre_line, line_through
 
 
 class Box(NamedTuple):
@@ -61,8 +62,13 @@ def outer_box(bar: Bar) -> Box:
     bar : Bar
         The bar.
     """
+    return _outer_box(bar.corners, bar.mandrels, bar.dia)
+
+
+@lru_cache(maxsize=8192)
+def _outer_box(corners: tuple[Point, ...], mandrels: tuple[float, ...], dia: float) -> Box:
     low, high = [float("inf")] * 3, [float("-inf")] * 3
-    line, radius = centre_line(bar), bar.dia / 2
+    line, radius = line_through(corners, mandrels, dia), dia / 2
     for piece in line.segments:
         for s, k in ((0.0, None), (piece.length, None), *_extremes(piece)):
             where, along = piece.at(s)

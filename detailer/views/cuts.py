@@ -52,24 +52,21 @@ def cuts_of(cage: Cage, clear: tuple[tuple[float, float], ...]) -> tuple[Cut, ..
         Each span between the faces of its supports. [mm]
     """
     letters: dict[object, str] = {}
-    found: list[Cut] = []
+    found: list[tuple[float, object]] = []
     shown: set[tuple[int, object]] = set()
-    places = sorted(_places(cage, clear), key=lambda p: (not p.wanted, p.x))
-    for place in places:
-        seen = signature(cage, place.x)
+    for place in sorted(_places(cage, clear), key=lambda p: (not p.wanted, p.x)):
         same = place.span, _stock(cage, place.x)
-        if not place.wanted and (seen in letters or same in shown):
+        if not place.wanted and same in shown:
             continue
-        letters.setdefault(seen, "")
-        shown.add(same)
-        found.append(Cut("", place.x))
-    for cut in sorted(found, key=lambda c: c.x):
-        seen = signature(cage, cut.x)
+        seen = signature(cage, place.x)
+        if place.wanted or seen not in letters:
+            letters[seen] = ""
+            shown.add(same)
+            found.append((place.x, seen))
+    for _, seen in sorted(found, key=lambda f: f[0]):
         if not letters[seen]:
             letters[seen] = letter(sum(1 for name in letters.values() if name))
-    return tuple(
-        Cut(letters[signature(cage, cut.x)], cut.x) for cut in sorted(found, key=lambda c: c.x)
-    )
+    return tuple(Cut(letters[seen], x) for x, seen in sorted(found, key=lambda f: f[0]))
 
 
 def letter(number: int) -> str:
