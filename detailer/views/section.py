@@ -292,7 +292,7 @@ def _shelves(
 ) -> Iterator[Primitive]:
     """Yield the call-outs at the right, then links and spacers at the left."""
     wishes = sorted(shelves, key=lambda s: -(s[1] + s[2]))
-    levels = _spread(tuple(level + step for _, level, step in wishes), kit.mm(SHELF))
+    levels = _spread(tuple(level + step for _, level, step in wishes), kit.mm(SHELF), web)
     edge = web.x1 + kit.mm(_beside(seen, web, 1))
     for (group, level, step), at in zip(wishes, levels, strict=True):
         tag = kit.tag(group.bars[0].bar)
@@ -316,12 +316,15 @@ def _beside(seen: Slice, web: Web, side: int) -> float:
     return WING + 2.0 if slab else FAR
 
 
-def _spread(levels: tuple[float, ...], step: float) -> tuple[float, ...]:
-    """Return descending heights at least a step apart, near the wanted ones."""
+def _spread(levels: tuple[float, ...], step: float, web: Web) -> tuple[float, ...]:
+    """Return descending heights at least a step apart, near the wanted ones, beside the web."""
     found: list[float] = []
     for level in levels:
         found.append(min(level, found[-1] - step) if found else level)
-    over = (levels[-1] - found[-1]) / 2 if found else 0.0
+    if not found:
+        return ()
+    over = (levels[-1] - found[-1]) / 2
+    over = min(max(over, web.z0 - found[-1]), max(web.z1 - found[0], 0.0))
     return tuple(level + over for level in found)
 
 
@@ -329,7 +332,7 @@ def _left_side(cage: Cage, seen: Slice, web: Web, kit: Kit) -> Iterator[Primitiv
     """Yield the call-outs of links and spacers at the left of the web."""
     edge = web.x0 - kit.mm(_beside(seen, web, -1))
     named = _named_left(cage, seen, kit)
-    levels = _spread(tuple(n[0] for n in named), kit.mm(SHELF))
+    levels = _spread(tuple(n[0] for n in named), kit.mm(SHELF), web)
     for (z, x, text, bar), at in zip(named, levels, strict=True):
         tag = kit.tag(bar)
         yield kit.text((edge, at - kit.mm(TEXT / 2)), text, align=Align.RIGHT, tag=tag)

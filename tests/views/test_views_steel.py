@@ -10,12 +10,12 @@ from types import SimpleNamespace
 from typing import Any
 
 import pytest
+from detailer.drawing.text import width as text_width
 from example_cage import LEFT, LEFT2, RIGHT, RIGHT2, example_cage
 
 from detailer.cage.bar import Cage
 from detailer.cage.cut import cut
 from detailer.drawing.primitives import Dimension, Disc, Label, Path, Pen, Primitive
-from detailer.drawing.text import width as text_width
 from detailer.values import Face, Role
 from detailer.views.bent import bent_bars, bent_items
 from detailer.views.chains import elevation_items
