@@ -8,7 +8,6 @@ from functools import cached_property
 
 from detailer.cage.bar import Cage
 from detailer.drawing.primitives import XY, Drawing, Placed, Primitive, Sheet, View
-from detailer.drawing.sheets import make_view
 from detailer.findings import Finding
 from detailer.model import Assumption, Beam, Project
 from detailer.schedule.rows import Row as ScheduleRow
@@ -27,6 +26,7 @@ from detailer.views.paper import PAPERS, Paper, space_of, title_room
 from detailer.views.pulled import pulled_items
 from detailer.views.section import section_items
 from detailer.views.table import Table, table_items, table_of
+from detailer.views.viewing import make_view
 
 SECTION_SCALES = (10.0, 15.0, 20.0)
 """Scales of sections, the largest picture first."""
