@@ -14,6 +14,10 @@ BINDING = 22.0
 """The same at the left, where sheets are bound. [mm]"""
 
 
+FRAME = 7.0
+"""From the edge of the paper to the frame, but for the binding edge. [mm]"""
+
+
 @dataclass(frozen=True, slots=True)
 class Paper:
     """A size of paper with the scale of the elevation tried on it."""
@@ -49,14 +53,37 @@ TITLE_BLOCK = (185.0, 60.0)
 """Width and height of the title block. [mm]"""
 
 
-def title_room(paper: Paper) -> Room:
-    """Return where the title block lies: in the lower right corner, with some air.
+def frame_of(paper: Paper) -> Room:
+    """Return the frame: wider at the left, where sheets are bound.
 
     Parameters
     ----------
     paper : Paper
         The paper.
     """
-    space = space_of(paper)
-    width, height = TITLE_BLOCK
-    return Room(space.x1 - width - 3.0, space.y0, space.x1, space.y0 + height + 3.0)
+    w, h = paper.size
+    return Room(BINDING - MARGIN + FRAME, FRAME, w - FRAME, h - FRAME)
+
+
+def title_corner(paper: Paper) -> XY:
+    """Return the lower left corner of the title block.
+
+    Parameters
+    ----------
+    paper : Paper
+        The paper.
+    """
+    frame = frame_of(paper)
+    return frame.x1 - TITLE_BLOCK[0], frame.y0
+
+
+def title_room(paper: Paper) -> Room:
+    """Return what the title block takes, with some air.
+
+    Parameters
+    ----------
+    paper : Paper
+        The paper.
+    """
+    x, y = title_corner(paper)
+    return Room(x - 4.0, y, x + TITLE_BLOCK[0], y + TITLE_BLOCK[1] + 4.0)

@@ -59,7 +59,9 @@ class Group:
         return tuple((-c.y, c.z) for c in self.bars)
 
 
-def section_items(cage: Cage, x: float, scale: float) -> tuple[Primitive, ...]:
+def section_items(
+    cage: Cage, x: float, scale: float, *, cover: bool = False
+) -> tuple[Primitive, ...]:
     """Return a section with its call-outs and dimensions.
 
     Parameters
@@ -70,6 +72,8 @@ def section_items(cage: Cage, x: float, scale: float) -> tuple[Primitive, ...]:
         Where it is cut. [mm]
     scale : float
         Of the section.
+    cover : bool
+        Whether the cover is dimensioned here; once on a drawing is enough.
     """
     kit = Kit(cage.member, scale)
     seen = cut(cage, x)
@@ -82,6 +86,7 @@ def section_items(cage: Cage, x: float, scale: float) -> tuple[Primitive, ...]:
         *_discs(seen, kit),
         *_call_outs(cage, seen, web, kit),
         *_dimensions(seen, web, kit, _words_left(cage, seen, kit)),
+        *(_cover(seen, web, kit) if cover else ()),
     )
 
 
@@ -371,12 +376,17 @@ def _named_left(cage: Cage, seen: Slice, kit: Kit) -> list[tuple[float, float, s
 
 
 def _dimensions(seen: Slice, web: Web, kit: Kit, words: float) -> Iterator[Primitive]:
-    """Yield width, depth outside the words at the left, and the cover to the links."""
+    """Yield width, and depth outside the words at the left."""
     bottom = web.z0 - kit.mm(FAR + TEXT + 5.0)
     left = web.x0 - kit.mm(_beside(seen, web, -1) + 2.0) - words
     short = bottom + kit.mm(EXTENSION)
     yield Dimension(start=(web.x0, short), end=(web.x1, short), line=bottom)
     yield Dimension(start=(web.x0, web.z0), end=(web.x0, web.z1), line=left, vertical=True)
+
+
+def _cover(seen: Slice, web: Web, kit: Kit) -> Iterator[Dimension]:
+    """Yield the cover to the links, below the width."""
+    bottom = web.z0 - kit.mm(FAR + TEXT + 5.0)
     edges = [-(outer_box(bar).y0 + bar.placings[k][1]) for bar, k in seen.links]
     if edges:
         line = bottom - kit.mm(6.0)

@@ -19,6 +19,7 @@ from detailer.views.cuts import Cut, cuts_of
 from detailer.views.demand import curves_of
 from detailer.views.diagram import Curves, diagram_items
 from detailer.views.elevation import picture, stage_of
+from detailer.views.frame import frame_items, status_item
 from detailer.views.notes import Note, Text, note_items, notes_of, set_notes
 from detailer.views.outline import beam_depth, clear_spans
 from detailer.views.pack import GAP, Room, Row, pack, set_rows
@@ -167,7 +168,7 @@ def _sections(content: Content, scale: float) -> Iterator[View]:
         firsts.setdefault(cut.letter, cut)
     for letter in sorted(firsts, key=lambda n: (len(n), n)):
         name, title = f"{letter}-{letter}", f"{letter}-{letter} 1:{scale:.0f}"
-        items = section_items(cage, firsts[letter].x, scale)
+        items = section_items(cage, firsts[letter].x, scale, cover=letter == content.cuts[0].letter)
         yield make_view(f"{cage.member} {name}", title, scale, items)
     bent = bent_items(cage, scale)
     if bent:
@@ -232,7 +233,11 @@ def _composed(
         title=title,
         size=paper.size,
         views=tuple(_in_model(p, elevation) for p in views),
-        items=placed[1],
+        items=(
+            *frame_items(project, content.beam, paper, title, _scales(views)),
+            status_item(paper, content.beam.mark),
+            *placed[1],
+        ),
     )
 
 
@@ -256,6 +261,10 @@ def _hopeful(content: Content, paper: Paper, scale: float) -> bool:
     )
     room = space.x1 - space.x0, space.y1 - space.y0
     return wide <= room[0] and need <= room[0] * room[1]
+
+
+def _scales(views: tuple[Placed, ...]) -> str:
+    return ", ".join(f"1:{scale:.0f}" for scale in sorted({p.view.scale for p in views}))
 
 
 def _notes(content: Content) -> Iterator[tuple[float, Text]]:
