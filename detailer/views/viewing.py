@@ -22,7 +22,7 @@ from detailer.views.metrics import width
 TITLE = 3.5
 """Height of a view's title. [mm on paper]"""
 
-UNDER = 3.0
+UNDER = 2.0
 """From what is drawn to the title. [mm on paper]"""
 
 BELOW_LINE = 0.3
