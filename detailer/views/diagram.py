@@ -62,7 +62,7 @@ def diagram_items(stage: Stage, curves: Curves) -> tuple[Primitive, ...]:
         *_cut_offs(stage, curves, scale),
         *_lines(curves, scale, kit),
         *_peaks(stage, curves, scale),
-        *_legend(stage, scale.y(-up) + kit.mm(8.5)),
+        *_legend(stage, curves, scale.y(-up) + kit.mm(8.5)),
     )
 
 
@@ -172,7 +172,7 @@ def _values(
         yield from kit.leader((at, edge - way * kit.mm(0.7)), (x, scale.y(m)), tag=tag)
 
 
-def _legend(stage: Stage, y: float) -> Iterator[Primitive]:
+def _legend(stage: Stage, curves: Curves, y: float) -> Iterator[Primitive]:
     kit = stage.kit
     x = stage.x0
     for pen, words in (
@@ -180,6 +180,8 @@ def _legend(stage: Stage, y: float) -> Iterator[Primitive]:
         (Pen.RESISTANCE, "resistance of what is placed"),
         (Pen.HIDDEN, "bar ends"),
     ):
+        if pen is Pen.RESISTANCE and not curves.at:
+            continue
         middle = y + kit.mm(TEXT / 2)
         yield kit.line((x, middle), (x + kit.mm(9.0), middle), pen=pen)
         yield kit.text((x + kit.mm(10.5), y), words, align=Align.LEFT)

@@ -10,8 +10,9 @@ import pytest
 
 import detailer
 from detailer.cage.bar import Cage
-from detailer.drawing.primitives import Drawing, Placed, Sheet
+from detailer.drawing.primitives import Drawing, Pen, Placed, Sheet
 from detailer.drawing.primitives import Label as Text
+from detailer.drawing.primitives import Path as Line
 from detailer.findings import Finding, Place
 from detailer.model import Project
 from detailer.placing.place import place
@@ -139,3 +140,28 @@ def test_words_are_broken_to_a_width() -> None:
     lines = wrapped("one two three four five six seven eight nine ten", 30.0)
     assert len(lines) > 1
     assert " ".join(lines) == "one two three four five six seven eight nine ten"
+
+
+def test_the_diagram_shows_what_resists(made: Made) -> None:
+    project, cages, _ = made
+    beam, cage = project.beams[0], cages[0]
+    drawing = beam_drawing(
+        project,
+        beam,
+        envelope(project, beam),
+        cage,
+        (),
+        rows(cages),
+        assumptions=(),
+        resistance=lambda x, sagging: 200e6 if sagging else 150e6,
+    )
+    (view,) = (p.view for p in drawing.sheets[0].views if p.view.name == "FB1 moments")
+    lines = [
+        i
+        for i in view.items
+        if isinstance(i, Line) and i.pen is Pen.RESISTANCE and len(i.points) > 1
+    ]
+    ends = sorted({round(y) for line in lines for _, y in line.points})
+    assert min(ends) < 0 < max(ends)
+    texts = [i.text for i in view.items if isinstance(i, Text)]
+    assert texts.count("165") == 2 and "−140" in texts
