@@ -17,6 +17,9 @@ FROM_FACE = 150.0
 SHORT = 100.0
 """A stretch shorter than this between two bar ends gets no section of its own. [mm]"""
 
+STUBBY = 1000.0
+"""A span or overhang shorter than this is not cut at its middle as a matter of course. [mm]"""
+
 LEVEL = 1.0 - 1e-9
 """A bar in a crank has a direction with less of x than this."""
 
@@ -122,7 +125,7 @@ def _places(cage: Cage, clear: tuple[tuple[float, float], ...]) -> Iterator[_Pla
         stops = [x0, *(x for x in events if x0 + 1 < x < x1 - 1), x1]
         middle = (x0 + x1) / 2
         for a, b in pairwise(stops):
-            if a <= middle < b:
+            if a <= middle < b and x1 - x0 >= STUBBY:
                 yield _Place(span, middle if _level_at(cage, middle) else (a + b) / 2, True)
             elif b - a >= SHORT and _level_at(cage, (a + b) / 2):
                 yield _Place(span, (a + b) / 2, False)
