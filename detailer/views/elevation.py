@@ -8,7 +8,7 @@ from math import sqrt
 
 from detailer.cage.bar import Bar, Cage
 from detailer.cage.measure import outer_box
-from detailer.drawing.primitives import XY, Align, Disc, Path, Pen, Primitive
+from detailer.drawing.primitives import XY, Align, Disc, Path, Pen, Primitive, Tag
 from detailer.values import Face, Role
 from detailer.views.cuts import Cut
 from detailer.views.kit import TEXT, TITLE, Kit, call_out
@@ -160,11 +160,11 @@ def _bars(stage: Stage) -> Iterator[Path]:
                 yield _tick(end, outward, inward, kit, tag)
 
 
-def _tick(end: XY, outward: int, inward: float, kit: Kit, tag: object) -> Path:
+def _tick(end: XY, outward: int, inward: float, kit: Kit, tag: Tag) -> Path:
     """Return the 45° tick that shows where a straight bar stops."""
     size = kit.mm(TICK) / sqrt(2)
     tip = (end[0] - outward * size, end[1] + inward * size)
-    return Path(points=(end, tip), pen=Pen.BAR_EXTRA, tag=tag)  # type: ignore[arg-type]
+    return Path(points=(end, tip), pen=Pen.BAR_EXTRA, tag=tag)
 
 
 def _spacers(stage: Stage) -> Iterator[Primitive]:
