@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
+from collections.abc import Mapping
 from math import pi
 from types import MappingProxyType
 
 DENSITY = 7850.0
 """Density of steel. [kg/m³]"""
 
-MASS = MappingProxyType(
+MASS: Mapping[float, float] = MappingProxyType(
     {
         4: 0.099,
         5: 0.154,
@@ -60,6 +61,12 @@ ELONGATION = MappingProxyType(
 )
 """Least elongation by grade. [%]"""
 
+LENGTH_TOLERANCE = (75.0, 25.0)
+"""What a bar of a specified length may be over and under (confirmed on a page). [mm]"""
+
+STOCK_LENGTH = 12_000.0
+"""Longest bar usually delivered: trade practice, FROM MEMORY (page_seen=False). [mm]"""
+
 
 def area(dia: float) -> float:
     """Return the nominal area. [mm²]
@@ -94,7 +101,7 @@ def mass_per_metre(dia: float) -> float:
     ----------
     .. [1] IS 1786:2008, Table 1 (confirmed on makers' pages).
     """
-    return MASS[round(dia)]
+    return MASS[dia]
 
 
 def mass_tolerance(dia: float) -> float:
@@ -113,7 +120,7 @@ def mass_tolerance(dia: float) -> float:
 
 
 def bend_test_mandrel(dia: float) -> float:
-    """Return the mandrel of the bend test of Fe 500. [mm]
+    """Return the mandrel of the bend test of Fe 500, not of fabrication. [mm]
 
     Parameters
     ----------
@@ -125,3 +132,18 @@ def bend_test_mandrel(dia: float) -> float:
     .. [1] IS 1786:2008 (confirmed on makers' pages).
     """
     return (4 if dia <= 20 else 5) * dia
+
+
+def rebend_test_mandrel(dia: float) -> float:
+    """Return the mandrel of the rebend test of Fe 415 and Fe 500. [mm]
+
+    Parameters
+    ----------
+    dia : float
+        Nominal diameter. [mm]
+
+    References
+    ----------
+    .. [1] IS 1786:2008 (confirmed on makers' pages).
+    """
+    return (5 if dia <= 10 else 7) * dia

@@ -2,23 +2,24 @@
 
 from __future__ import annotations
 
-from math import ceil, radians, tan
+from collections.abc import Mapping
+from math import ceil, pi, radians, tan
 
 from detailer.values import Required
 
-HOOK_ALLOWANCE = {2: 9.0, 3: 11.0, 4: 13.0, 6: 17.0}
+HOOK_ALLOWANCE: Mapping[int, float] = {2: 9.0, 3: 11.0, 4: 13.0, 6: 17.0}
 """Allowance of a U hook in diameters, by radius over diameter.
 
 Derived: π(k + ½) + 4 − (k + 1), to the nearest half diameter.
 """
 
-BEND_ALLOWANCE = {2: 5.0, 3: 5.5, 4: 6.0, 6: 7.0}
+BEND_ALLOWANCE: Mapping[int, float] = {2: 5.0, 3: 5.5, 4: 6.0, 6: 7.0}
 """Allowance of a 90° bend in diameters, by radius over diameter.
 
 6 d for IS 1786 bars seen second-hand, the others derived.
 """
 
-LINK_ADDITION = {90: 20.0, 135: 24.0, 180: 28.0}
+LINK_ADDITION: Mapping[int, float] = {90: 20.0, 135: 24.0, 180: 28.0}
 """What two hooked ends add to 2(A + E) of a closed link on inside dimensions, in diameters.
 
 24 confirmed on quoting pages, 20 through the diamond link, 28 derived.
@@ -38,7 +39,7 @@ STRAIGHT_TOLERANCE = 25.0
 
 
 def radius_factor(dia: float, *, link: bool = False) -> int:
-    """Return k, the inner radius of a bend in diameters.
+    """Return k, the inner radius of a bend in diameters. [-]
 
     Parameters
     ----------
@@ -272,3 +273,42 @@ def bending_tolerance(dimension: float) -> tuple[float, float]:
         if dimension <= upto:
             return plus, minus
     return 7.0, 25.0
+
+
+def bend_deduction(dia: float, radius: float) -> float:
+    """Return by how much a 90° bend shortens the sum of its outside legs, exactly. [mm]
+
+    Parameters
+    ----------
+    dia : float
+        Nominal diameter. [mm]
+    radius : float
+        Inner radius. [mm]
+
+    References
+    ----------
+    .. [1] Geometry, 2(R + d) − (π/2)(R + d/2) (derived); the standard's R/2 + d lies within 0.21 d.
+    """
+    return 2 * (radius + dia) - pi / 2 * (radius + dia / 2)
+
+
+def exact_link_length(a: float, e: float, dia: float, hook_angle: int = 135) -> float:
+    """Return the centre line of a closed link with bends of 2 d and ends of 8 d. [mm]
+
+    Parameters
+    ----------
+    a, e : float
+        Inside dimensions. [mm]
+    dia : float
+        Diameter of the link. [mm]
+    hook_angle : int
+        Bend of its two ends: 90, 135 or 180. [degrees]
+
+    References
+    ----------
+    .. [1] Geometry (derived): what Table VIII of IS 2502:1963 is built on.
+    """
+    radius = bend_radius(dia, link=True)
+    straights = 2 * (a + e) - 8 * radius
+    bends = (3 * pi / 2 + 2 * radians(hook_angle)) * (radius + dia / 2)
+    return straights + bends + 2 * link_tail(dia)

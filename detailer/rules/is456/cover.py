@@ -3,10 +3,11 @@
 from __future__ import annotations
 
 from bisect import bisect_left
+from collections.abc import Mapping
 
 from detailer.values import Exposure, Required
 
-TABLE_16 = {
+TABLE_16: Mapping[Exposure, float] = {
     Exposure.MILD: 20.0,
     Exposure.MODERATE: 30.0,
     Exposure.SEVERE: 45.0,
@@ -25,6 +26,15 @@ TABLE_16A_CONTINUOUS = (20.0, 20.0, 20.0, 30.0, 40.0, 50.0)
 
 FIG_1_BEAM_WIDTH = (200.0, 200.0, 200.0, 200.0, 240.0, 280.0)
 """Least width of beams by hours of fire. [mm]"""
+
+COVER_TOLERANCE = (10.0, 0.0)
+"""What cover as built may be over and under the nominal one, 12.3.2. [mm]"""
+
+SPACER_PITCH = 1000.0
+"""Cover blocks and chairs stand no further apart, 12.3.2. [mm]"""
+
+ANTI_SPALLING_COVER = 40.0
+"""Thicker cover of beams wants measures against spalling in a fire, 21.3.1. [mm]"""
 
 
 def nominal_cover(exposure: Exposure, fck: float, main_dia: float) -> Required:
@@ -120,3 +130,18 @@ def cover_for_bar(dia: float) -> Required:
     .. [1] IS 456:2000, 26.4.1 (confirmed on the page).
     """
     return Required(dia, "IS 456:2000, 26.4.1", "not less than the bar")
+
+
+def placing_tolerance(d: float) -> float:
+    """Return by how much placed steel may miss its place, plus and minus. [mm]
+
+    Parameters
+    ----------
+    d : float
+        Effective depth. [mm]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 12.3.1 (confirmed on the page).
+    """
+    return 10.0 if d <= 200 else 15.0

@@ -7,9 +7,17 @@ from detailer.values import Required
 CUTOFF_DOUBLE_MAX_DIA = 36.0
 """Largest bar that 26.2.3.2 c lets stop in tension. [mm]"""
 
+CUTOFF_DOUBLE_SHARE = 2.0
+"""What the continuing bars give over what is needed, 26.2.3.2 c."""
+
+CUTOFF_LINK_REACH = 0.75
+"""Extra links stand over this share of d from the end of the stopped bar, 26.2.3.2 b."""
+
 
 def cutoff_extension(d: float, dia: float) -> Required:
-    """Return how far a bar goes on past the point where it is no longer needed.
+    """Return how far a bar goes on past the point where it is no longer needed. [mm]
+
+    Not at simple supports nor at the free end of a cantilever.
 
     Parameters
     ----------
@@ -93,7 +101,7 @@ def cutoff_link_spacing(d: float, beta: float) -> Required:
 
 
 def positive_share(continuous: bool) -> Required:
-    """Return the share of bottom steel that goes into a support.
+    """Return the share of bottom steel that goes into a support. [-]
 
     Parameters
     ----------
@@ -110,7 +118,7 @@ def positive_share(continuous: bool) -> Required:
 
 
 def positive_embedment(ld: float) -> Required:
-    """Return how far bottom bars go into a support, from its face.
+    """Return how far bottom bars go into a support, from its face. [mm]
 
     Parameters
     ----------
@@ -130,13 +138,15 @@ def support_bond_length(m1: float, v: float, l0: float, *, confined: bool) -> Re
     Parameters
     ----------
     m1 : float
-        Moment of resistance of the bars that reach the support. [N·mm]
+        Moment of resistance of the bars that reach the support, at 0.87 fy. [N·mm]
     v : float
         Shear at the support. [N]
     l0 : float
-        Anchorage beyond the support's centre, bends included. [mm]
+        Anchorage beyond the support's centre, bends included; at an inflection no more than
+        :func:`inflection_anchorage`. [mm]
     confined : bool
-        Whether a compressive reaction confines the ends: M1/V counts 1.3 times.
+        Whether a compressive reaction confines the ends: M1/V counts 1.3 times. Not at a
+        point of inflection.
 
     References
     ----------
@@ -165,7 +175,7 @@ def inflection_anchorage(d: float, dia: float) -> Required:
 
 
 def negative_share() -> Required:
-    """Return the share of top steel at a support that goes past the inflection.
+    """Return the share of top steel at a support that goes past the inflection. [-]
 
     References
     ----------
@@ -193,3 +203,18 @@ def negative_extension(d: float, dia: float, clear_span: float) -> Required:
     terms = ((d, "d"), (12 * dia, "12 φ"), (clear_span / 16, "clear span/16"))
     value, because = max(terms)
     return Required(value, "IS 456:2000, 26.2.3.4", because)
+
+
+def bundle_cutoff_stagger(dia: float) -> Required:
+    """Return how far apart the bars of a bundle stop, unless all stop in a support. [mm]
+
+    Parameters
+    ----------
+    dia : float
+        Nominal diameter. [mm]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 26.2.3.5 (confirmed on the page).
+    """
+    return Required(40 * dia, "IS 456:2000, 26.2.3.5", "40 φ between ends of bundled bars")

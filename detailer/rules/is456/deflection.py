@@ -2,11 +2,12 @@
 
 from __future__ import annotations
 
+from collections.abc import Mapping
 from math import log10
 
 from detailer.values import Required
 
-BASIC_RATIO = {"cantilever": 7.0, "simple": 20.0, "continuous": 26.0}
+BASIC_RATIO: Mapping[str, float] = {"cantilever": 7.0, "simple": 20.0, "continuous": 26.0}
 """Span over effective depth up to 10 m, 23.2.1 a."""
 
 
@@ -19,6 +20,11 @@ def span_depth_basic(kind: str, span: float) -> float:
         "cantilever", "simple" or "continuous".
     span : float
         Effective span; beyond 10 m the ratio falls, cantilevers excepted. [mm]
+
+    Raises
+    ------
+    KeyError
+        For another kind.
 
     References
     ----------

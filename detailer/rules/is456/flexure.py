@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Mapping
 from math import sqrt
 
 CONCRETE_STRAIN = 0.0035
@@ -19,8 +20,8 @@ FLANGE_STRESS = 0.45
 STEEL_MODULUS = 200_000.0
 """Modulus of elasticity of steel, 5.6.3. [N/mm²]"""
 
-XU_LIMIT = {250: 0.53, 415: 0.48, 500: 0.46}
-"""Greatest depth of the neutral axis over d, 38.1."""
+XU_LIMIT: Mapping[int, float] = {250: 0.53, 415: 0.48, 500: 0.46}
+"""Greatest depth of the neutral axis over d by grade, 38.1."""
 
 CURVE = ((0.80, 0.0), (0.85, 0.0001), (0.90, 0.0003), (0.95, 0.0007), (0.975, 0.001), (1.0, 0.002))
 """Inelastic strain of cold-worked bars at shares of the design strength, Fig. 23 A.
@@ -176,3 +177,78 @@ def flange_depth(df: float, xu: float) -> float:
     .. [1] IS 456:2000, G-2.2, G-2.2.1 and G-2.3 (confirmed on the page).
     """
     return min(0.15 * xu + 0.65 * df, df)
+
+
+def compression_stress(fy: float, depth_ratio: float) -> float:
+    """Return the design stress of compression steel at the limit of the neutral axis. [N/mm²]
+
+    Parameters
+    ----------
+    fy : float
+        Characteristic strength. [N/mm²]
+    depth_ratio : float
+        Depth of the compression steel over the effective depth, d'/d. [-]
+
+    References
+    ----------
+    .. [1] IS 456:2000, G-1.2 (confirmed on the page); the curve of Fig. 23, see
+       :func:`steel_stress`.
+    """
+    k = xu_limit(fy)
+    return steel_stress(CONCRETE_STRAIN * max(k - depth_ratio, 0.0) / k, fy)
+
+
+def compression_steel(excess: float, d: float, d_top: float, fy: float) -> float:
+    """Return the compression steel for what exceeds the limit moment. [mm²]
+
+    Parameters
+    ----------
+    excess : float
+        Moment beyond :func:`limit_moment`. [N·mm]
+    d : float
+        Effective depth. [mm]
+    d_top : float
+        Depth of the compression steel. [mm]
+    fy : float
+        Characteristic strength. [N/mm²]
+
+    Raises
+    ------
+    ValueError
+        Steel below the neutral axis does not help.
+
+    References
+    ----------
+    .. [1] IS 456:2000, G-1.2 (confirmed on the page): the concrete it displaces is neglected.
+    """
+    stress = compression_stress(fy, d_top / d)
+    if stress <= 0:
+        raise ValueError("compression steel lies below the neutral axis")
+    return excess / (stress * (d - d_top))
+
+
+def flanged_moment(bf: float, bw: float, df: float, d: float, xu: float, fck: float) -> float:
+    """Return the moment of a flanged section at a neutral axis below the flange. [N·mm]
+
+    Parameters
+    ----------
+    bf : float
+        Effective width of the flange. [mm]
+    bw : float
+        Width of the web. [mm]
+    df : float
+        Thickness of the flange. [mm]
+    d : float
+        Effective depth. [mm]
+    xu : float
+        Depth of the neutral axis, no more than its limit. [mm]
+    fck : float
+        Characteristic strength of concrete. [N/mm²]
+
+    References
+    ----------
+    .. [1] IS 456:2000, G-2.2, G-2.2.1 and G-2.3 (confirmed on the page).
+    """
+    web = BLOCK_FORCE * fck * bw * xu * (d - BLOCK_CENTRE * xu)
+    y = flange_depth(df, xu)
+    return web + FLANGE_STRESS * fck * (bf - bw) * y * (d - y / 2)

@@ -11,6 +11,9 @@ LAP_MAX_DIA = 32.0
 LAP_USE_LIMIT = 0.5
 """Laps are recommended where the moment is no more than this share of the resistance, 26.2.5."""
 
+WELD_SHARE_TENSION = 0.8
+"""Share of the bar's strength that a weld in tension counts for, 26.2.5.2; in compression 1."""
+
 
 def lap_length(dia: float, stress: float, bond: float, factor: float = 1.0) -> Required:
     """Return the lap of bars in flexural tension. [mm]
@@ -60,7 +63,7 @@ def lap_length_compression(dia: float, stress: float, bond: float) -> Required:
 def lap_factor(
     *, top_cast: bool, cover_least: float, corner: bool, gap_adjacent: float, dia: float
 ) -> Required:
-    """Return by how much a lap grows for its place in the section.
+    """Return by how much a lap in tension grows for its place in the section. [-]
 
     Parameters
     ----------
@@ -124,10 +127,31 @@ def lap_stagger(lap: float) -> Required:
 
 
 def lap_share() -> Required:
-    """Return the share of bars that should be lapped at a section, at most.
+    """Return the share of bars that should be lapped at a section, at most. [-]
 
     References
     ----------
     .. [1] IS 456:2000, 26.2.5 (confirmed on the page; a recommendation).
     """
     return Required(0.5, "IS 456:2000, 26.2.5", "not more than half the bars at a section")
+
+
+def lap_length_direct(dia: float, stress: float, bond: float) -> Required:
+    """Return the lap of bars in direct tension. [mm]
+
+    Parameters
+    ----------
+    dia : float
+        Diameter of the smaller bar. [mm]
+    stress : float
+        Stress to be passed on. [N/mm²]
+    bond : float
+        Design bond stress in tension. [N/mm²]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 26.2.5.1 c (confirmed on the page).
+    """
+    ld = development_length(dia, stress, bond).value
+    because = "2 Ld" if 2 * ld >= 30 * dia else "30 φ"
+    return Required(max(2 * ld, 30 * dia), "IS 456:2000, 26.2.5.1 c", because)

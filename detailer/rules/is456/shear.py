@@ -3,11 +3,13 @@
 from __future__ import annotations
 
 from bisect import bisect_right
+from collections.abc import Mapping
+from math import cos, radians, sin
 
 from detailer.values import Required
 
 TABLE_19_PT = (0.15, 0.25, 0.50, 0.75, 1.00, 1.25, 1.50, 1.75, 2.00, 2.25, 2.50, 2.75, 3.00)
-TABLE_19 = {
+TABLE_19: Mapping[int, tuple[float, ...]] = {
     15: (0.28, 0.35, 0.46, 0.54, 0.60, 0.64, 0.68, 0.71, 0.71, 0.71, 0.71, 0.71, 0.71),
     20: (0.28, 0.36, 0.48, 0.56, 0.62, 0.67, 0.72, 0.75, 0.79, 0.81, 0.82, 0.82, 0.82),
     25: (0.29, 0.36, 0.49, 0.57, 0.64, 0.70, 0.74, 0.78, 0.82, 0.85, 0.88, 0.90, 0.92),
@@ -17,11 +19,14 @@ TABLE_19 = {
 }
 """Design shear strength of concrete by grade, at the percentages of TABLE_19_PT. [N/mm²]"""
 
-TABLE_20 = {15: 2.5, 20: 2.8, 25: 3.1, 30: 3.5, 35: 3.7, 40: 4.0}
+TABLE_20: Mapping[int, float] = {15: 2.5, 20: 2.8, 25: 3.1, 30: 3.5, 35: 3.7, 40: 4.0}
 """Greatest shear stress by grade. [N/mm²]"""
 
 LINK_FY_LIMIT = 415.0
 """Strength of links counts no higher, 40.4. [N/mm²]"""
+
+BENT_UP_SHARE = 0.5
+"""Bars bent up carry at most this share of the shear left to steel, 40.4."""
 
 
 def _grade(fck: float) -> int:
@@ -82,7 +87,10 @@ def max_shear_stress(fck: float) -> float:
 
 
 def enhanced_shear(tau_c: float, d: float, av: float) -> float:
-    """Return the shear strength at a section close to a support, on its face's side. [N/mm²]
+    """Return the shear strength at a section close to a support. [N/mm²]
+
+    Sections nearer than 2 d to the face gain; at the face itself no gain is counted, and the
+    stress stays bound by :func:`max_shear_stress`.
 
     Parameters
     ----------
@@ -209,3 +217,109 @@ def torsion_link_area(
     least = floor * s / design
     because = "torsion and shear" if asv >= least else "(τve − τc) b s / 0.87 fy"
     return Required(max(asv, least), "IS 456:2000, 41.4.3", because)
+
+
+def shear_stress(v: float, b: float, d: float, *, slope_moment: float = 0.0) -> float:
+    """Return the nominal shear stress. [N/mm²]
+
+    Parameters
+    ----------
+    v : float
+        Shear. [N]
+    b : float
+        Width of the web. [mm]
+    d : float
+        Effective depth. [mm]
+    slope_moment : float
+        M tan β of a beam of varying depth: positive where the moment grows with the depth. [N·mm]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 40.1 and 40.1.1 (confirmed on the page).
+    """
+    return (v - slope_moment / d) / (b * d)
+
+
+def inclined_link_shear(asv: float, s: float, d: float, fy: float, angle: float) -> float:
+    """Return the shear that inclined links, or a series of bent-up bars, carry. [N]
+
+    Parameters
+    ----------
+    asv : float
+        Area of one link or bend, all legs. [mm²]
+    s : float
+        Spacing along the beam. [mm]
+    d : float
+        Effective depth. [mm]
+    fy : float
+        Of the links; no more than 415 counts. [N/mm²]
+    angle : float
+        Slope to the axis of the beam, at least 45. [degrees]
+
+    Raises
+    ------
+    ValueError
+        Flatter than 45°.
+
+    References
+    ----------
+    .. [1] IS 456:2000, 40.4 b (confirmed on the page).
+    """
+    if angle < 45:
+        raise ValueError(f"links slope at least 45°, not {angle:g}°")
+    return link_shear(asv, s, d, fy) * (sin(radians(angle)) + cos(radians(angle)))
+
+
+def near_support_links(
+    tau_v: float, tau_c: float, b: float, d: float, av: float, fy: float
+) -> Required:
+    """Return the links, all together, for a section close to a support. [mm²]
+
+    They stand within the middle three quarters of `av`.
+
+    Parameters
+    ----------
+    tau_v : float
+        Nominal shear stress. [N/mm²]
+    tau_c : float
+        Strength by Table 19. [N/mm²]
+    b : float
+        Width of the web. [mm]
+    d : float
+        Effective depth. [mm]
+    av : float
+        Distance of the section from the face of the support. [mm]
+    fy : float
+        Of the links; no more than 415 counts. [N/mm²]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 40.5.2 with Amendment 4 (confirmed on the page).
+    """
+    design = 0.87 * min(fy, LINK_FY_LIMIT)
+    stress = tau_v - 2 * d * tau_c / av
+    because = "what concrete leaves" if stress >= 0.4 else "0.4 N/mm²"
+    return Required(av * b * max(stress, 0.4) / design, "IS 456:2000, 40.5.2", because)
+
+
+def torsion_moments(m: float, t: float, depth: float, b: float) -> tuple[float, float]:
+    """Return the moments for the tension face and for the other face, unsigned. [N·mm]
+
+    Parameters
+    ----------
+    m : float
+        Bending moment, unsigned. [N·mm]
+    t : float
+        Torsion. [N·mm]
+    depth : float
+        Overall depth. [mm]
+    b : float
+        Width of the web. [mm]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 41.4.2 and 41.4.2.1 (confirmed on the page): M + Mt; Mt − M where Mt is
+       the greater, else nothing. None of it where the equivalent stress stays under τc (41.3.2).
+    """
+    added = torsion_moment(t, depth, b)
+    return m + added, max(added - m, 0.0)

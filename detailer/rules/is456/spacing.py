@@ -2,9 +2,11 @@
 
 from __future__ import annotations
 
+from collections.abc import Mapping
+
 from detailer.values import Required
 
-TABLE_15 = {
+TABLE_15: Mapping[int, tuple[float, ...]] = {
     250: (215.0, 260.0, 300.0, 300.0, 300.0),
     415: (125.0, 155.0, 180.0, 210.0, 235.0),
     500: (105.0, 130.0, 150.0, 175.0, 195.0),
@@ -60,17 +62,40 @@ def max_clear_gap(fy: float, redistribution: float = 0.0) -> Required:
     Parameters
     ----------
     fy : float
-        Characteristic strength; between rows the stronger row serves. [N/mm²]
+        Characteristic strength, up to 550; between rows the stronger row serves. [N/mm²]
     redistribution : float
-        To (+) or from (−) the section, −30 to 30. [%]
+        To (+) or from (−) the section, −30 to 30; linear between columns. [%]
+
+    Raises
+    ------
+    ValueError
+        Outside the table.
 
     References
     ----------
     .. [1] IS 456:2000, 26.3.3 and Table 15 (confirmed on the page); Fe 550 derived.
     """
-    grade = next((g for g in sorted(TABLE_15) if fy <= g), max(TABLE_15))
+    grade = next((g for g in sorted(TABLE_15) if fy <= g), None)
+    if grade is None or not -30 <= redistribution <= 30:
+        raise ValueError(f"Table 15 has no fy {fy:g} at {redistribution:g} % redistribution")
     row = TABLE_15[grade]
-    at = (min(30.0, max(-30.0, redistribution)) + 30) / 15
+    at = (redistribution + 30) / 15
     low = min(3, int(at))
     value = row[low] + (row[low + 1] - row[low]) * (at - low)
-    return Required(value, "IS 456:2000, Table 15", f"Fe {grade}")
+    derived = ", by analogy: the table ends at Fe 500" if grade > 500 else ""
+    return Required(value, "IS 456:2000, Table 15", f"Fe {grade}{derived}")
+
+
+def min_group_gap(aggregate: float) -> Required:
+    """Return the least clear distance within a group where needle vibrators reach beside it. [mm]
+
+    Parameters
+    ----------
+    aggregate : float
+        Nominal maximum size of the aggregate. [mm]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 26.3.2 b (confirmed on the page).
+    """
+    return Required(2 / 3 * aggregate, "IS 456:2000, 26.3.2 b", "2/3 aggregate within a group")

@@ -91,20 +91,23 @@ def side_steel_spacing(b: float) -> Required:
     return Required(min(300.0, b), "IS 456:2000, 26.5.1.3", because)
 
 
-def max_link_spacing(d: float) -> Required:
-    """Return the greatest spacing of upright links. [mm]
+def max_link_spacing(d: float, *, inclined: bool = False) -> Required:
+    """Return the greatest spacing of links. [mm]
 
     Parameters
     ----------
     d : float
         Effective depth. [mm]
+    inclined : bool
+        Links at 45° may stand d apart, upright ones 0.75 d.
 
     References
     ----------
     .. [1] IS 456:2000, 26.5.1.5 (confirmed on the page).
     """
-    because = "0.75 d" if 0.75 * d < 300 else "300 mm"
-    return Required(min(0.75 * d, 300.0), "IS 456:2000, 26.5.1.5", because)
+    share = 1.0 if inclined else 0.75
+    because = ("d" if inclined else "0.75 d") if share * d < 300 else "300 mm"
+    return Required(min(share * d, 300.0), "IS 456:2000, 26.5.1.5", because)
 
 
 def min_link_area(b: float, s: float, fy: float) -> Required:
@@ -195,3 +198,20 @@ def flange_tension_width(bf: float, span: float) -> Required:
     """
     because = "the effective flange" if bf <= span / 10 else "span/10"
     return Required(min(bf, span / 10), "IS 456:2000, 26.5.1.8", because)
+
+
+def min_links_waived(tau_v: float, tau_c: float) -> bool:
+    """Return whether the stress is so low that the least area of links may be left out.
+
+    Parameters
+    ----------
+    tau_v : float
+        Nominal shear stress. [N/mm²]
+    tau_c : float
+        Shear strength of concrete. [N/mm²]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 26.5.1.6 (confirmed on the page; the clause says "may").
+    """
+    return tau_v < tau_c / 2
