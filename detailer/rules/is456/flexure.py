@@ -17,6 +17,9 @@ BLOCK_CENTRE = 0.42
 FLANGE_STRESS = 0.45
 """Stress in a flange over fck, G-2.2."""
 
+DESIGN_SHARE = 0.87
+"""Design stress of steel over fy, 38.1 e and Annex G."""
+
 STEEL_MODULUS = 200_000.0
 """Modulus of elasticity of steel, 5.6.3. [N/mm²]"""
 
@@ -101,7 +104,14 @@ def rectangle_moment(b: float, d: float, area: float, fck: float, fy: float) -> 
 
 
 def rectangle_steel(
-    b: float, d: float, moment: float, fck: float, design: float, block: float = 1.0
+    b: float,
+    d: float,
+    moment: float,
+    fck: float,
+    fy: float,
+    *,
+    share: float = DESIGN_SHARE,
+    block: float = 1.0,
 ) -> float:
     """Return the tension steel of an under-reinforced rectangle. [mm²]
 
@@ -115,11 +125,12 @@ def rectangle_steel(
         Factored moment. [N·mm]
     fck : float
         Characteristic strength of concrete. [N/mm²]
-    design : float
-        Design stress of steel: 0.87 fy here, fy/1.15 in the design aids. [N/mm²]
+    fy : float
+        Characteristic strength of steel. [N/mm²]
+    share : float
+        Design stress over fy: 0.87 here, 1/1.15 in SP 16. [-]
     block : float
-        Coefficient of the lever-arm term on As fy/(b d fck), with fy = design/0.87: 1.0 in
-        Annex G, 1.005 in the design aids. [-]
+        Coefficient of As fy/(b d fck) in the lever arm: 1 here, 1.005 in SP 16. [-]
 
     Raises
     ------
@@ -130,11 +141,11 @@ def rectangle_steel(
     ----------
     .. [1] IS 456:2000, G-1.1 b solved for the area (confirmed on the page).
     """
-    k = block / (0.87 * fck * b * d)
-    root = 1 - 4 * k * moment / d
+    k = block * fy / (b * d * fck)
+    root = 1 - 4 * k * moment / (share * fy * d)
     if root < 0:
         raise ValueError("the section cannot carry the moment with tension steel alone")
-    return (1 - sqrt(root)) / (2 * k) / design
+    return (1 - sqrt(root)) / (2 * k)
 
 
 def limit_moment(b: float, d: float, fck: float, fy: float) -> float:
