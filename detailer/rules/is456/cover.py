@@ -17,6 +17,7 @@ TABLE_16: Mapping[Exposure, float] = {
 """Nominal cover by exposure. [mm]"""
 
 FIRE_HOURS = (0.5, 1.0, 1.5, 2.0, 3.0, 4.0)
+"""Rows of Table 16A. [h]"""
 
 TABLE_16A_SIMPLE = (20.0, 20.0, 20.0, 40.0, 60.0, 70.0)
 """Nominal cover of simply supported beams by hours of fire. [mm]"""
