@@ -64,7 +64,7 @@ def module_of(path: Path) -> ModuleType:
 
 def public_functions() -> list[tuple[str, Callable[..., object]]]:
     """Return every public rule with its name."""
-    found = []
+    found: list[tuple[str, Callable[..., object]]] = []
     for path in FILES:
         module = module_of(path)
         found += [
@@ -138,14 +138,15 @@ def docstrings(path: Path) -> list[tuple[str, str]]:
             found.append((node.name, ast.get_docstring(node) or ""))
         elif isinstance(node, ast.Assign | ast.AnnAssign):
             target = node.targets[0] if isinstance(node, ast.Assign) else node.target
-            text = after.value.value if is_text(after) else ""
-            found.append((ast.unparse(target), text))
+            found.append((ast.unparse(target), text_of(after)))
     return found
 
 
-def is_text(node: ast.stmt | None) -> bool:
-    """Return whether a statement is a bare string."""
-    return isinstance(node, ast.Expr) and isinstance(node.value, ast.Constant)
+def text_of(node: ast.stmt | None) -> str:
+    """Return a bare string that stands as a statement, or nothing."""
+    if isinstance(node, ast.Expr) and isinstance(node.value, ast.Constant):
+        return str(node.value.value)
+    return ""
 
 
 def test_values_from_memory_are_marked_counted_and_listed() -> None:

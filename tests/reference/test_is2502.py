@@ -109,3 +109,9 @@ def test_lengths_are_rounded_up_and_whole_ones_kept() -> None:
     assert is2502.round_up(1301, 25) == 1325
     assert is2502.round_up(1300, 25) == 1300
     assert is2502.round_up(1300 + 1e-10, 25) == 1300
+
+
+@pytest.mark.source("IS 2502:1963, straight end of main bars", page_seen=False)
+def test_straight_end_of_main_bars() -> None:
+    """4 d, FROM MEMORY."""
+    assert is2502.min_straight_end(16).value == 64

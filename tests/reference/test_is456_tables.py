@@ -216,6 +216,8 @@ def test_laps() -> None:
     assert is456.lap_length(16, 100, 2.24).value == 30 * 16
     assert is456.lap_length(16, 100, 2.24).because == "30 φ"
     assert is456.lap_length_compression(16, 100, 2.8).value == 24 * 16
+    assert is456.lap_length_direct(20, 300, 2.0).value == 2 * 750
+    assert is456.lap_length_direct(20, 60, 2.0).value == 30 * 20
     assert is456.lap_straight(12).value == 200
     assert is456.lap_straight(16).value == 240
     assert is456.lap_stagger(1000).value == 1300
@@ -283,6 +285,7 @@ def test_steel_of_beams() -> None:
     assert not is456.needs_side_steel(750)
     assert is456.needs_side_steel(751)
     assert is456.needs_side_steel(451, torsion=True)
+    assert not is456.needs_side_steel(450, torsion=True)
     assert is456.side_steel(300, 800).value == 240
     assert is456.side_steel_spacing(230).value == 230
     assert is456.side_steel_spacing(400).value == 300
@@ -328,3 +331,81 @@ def test_lateral_restraint() -> None:
     assert is456.lateral_limit(300, 600, cantilever=False).value == 18_000
     assert is456.lateral_limit(200, 1000, cantilever=False).value == 10_000
     assert is456.lateral_limit(300, 600, cantilever=True).value == 7500
+
+
+@pytest.mark.source("IS 456:2000, 26.2.2.5", page_seen=True)
+def test_bearing_in_bends() -> None:
+    """1.5 fck/(1 + 2φ/a)."""
+    assert is456.bearing_in_bend(20, 25, 50).value == pytest.approx(15)
+    assert is456.bearing_in_bend(20, 25, 75).value == pytest.approx(18)
+
+
+@pytest.mark.source("IS 456:2000, 12.3 and 21.3.1", page_seen=True)
+def test_tolerances_of_placing() -> None:
+    assert [is456.placing_tolerance(d) for d in (200, 201)] == [10, 15]
+    assert is456.COVER_TOLERANCE == (10, 0)
+    assert is456.SPACER_PITCH == 1000
+    assert is456.ANTI_SPALLING_COVER == 40
+
+
+@pytest.mark.source("IS 456:2000, 40.1.1", page_seen=True)
+def test_shear_stress_of_varying_depth() -> None:
+    """Less where the moment grows with the depth, more where it falls."""
+    assert is456.shear_stress(100e3, 250, 400) == 1.0
+    assert is456.shear_stress(100e3, 250, 400, slope_moment=8e6) == pytest.approx(0.8)
+    assert is456.shear_stress(100e3, 250, 400, slope_moment=-8e6) == pytest.approx(1.2)
+
+
+@pytest.mark.source("IS 456:2000, 40.4", page_seen=True)
+def test_inclined_links() -> None:
+    upright = is456.link_shear(100, 150, 450, 415)
+    assert upright == pytest.approx(0.87 * 415 * 100 * 450 / 150)
+    assert is456.link_shear(100, 150, 450, 500) == upright
+    assert is456.inclined_link_shear(100, 150, 450, 415, 45) == pytest.approx(2**0.5 * upright)
+    assert is456.inclined_link_shear(100, 150, 450, 415, 90) == pytest.approx(upright)
+    with pytest.raises(ValueError, match="45°"):
+        is456.inclined_link_shear(100, 150, 450, 415, 30)
+
+
+@pytest.mark.source("IS 456:2000, 41.4.2.1 and 41.4.3", page_seen=True)
+def test_steel_for_torsion() -> None:
+    """By hand: 34.62 for torsion, 27.70 for shear; a floor of 83.09."""
+    links = is456.torsion_link_area(10e6, 100e3, 100, 200, 400, 415, floor=0)
+    assert links.value == pytest.approx(34.62 + 27.70, abs=0.01)
+    floor = is456.torsion_link_area(10e6, 100e3, 100, 200, 400, 415, floor=300)
+    assert floor.value == pytest.approx(83.09, abs=0.01)
+    assert "τve" in floor.because
+    near, far = is456.torsion_moments(10e6, 34e6, 600, 300)
+    assert (near, far) == pytest.approx((70e6, 50e6))
+
+
+@pytest.mark.source("IS 456:2000, 23.1.2", page_seen=True)
+def test_effective_flanges() -> None:
+    """T and L within a floor, and isolated: never more than is there."""
+    tee = is456.effective_flange(6000, 300, 120, both_sides=True, actual=3000)
+    assert tee.value == 1000 + 300 + 720
+    ell = is456.effective_flange(6000, 300, 120, both_sides=False, actual=3000)
+    assert ell.value == 500 + 300 + 360
+    assert is456.isolated_flange(6000, 300, 1000, both_sides=True).value == 900
+    assert is456.isolated_flange(6000, 300, 1000, both_sides=False).value == 600
+    assert is456.isolated_flange(12_000, 300, 1000, both_sides=True).value == 1000
+
+
+@pytest.mark.source("IS 456:2000, Fig. 4, through the formula of SP 24", page_seen=False)
+def test_factor_for_tension_steel() -> None:
+    """1/(0.225 + 0.00322 fs + 0.625 log pt), at most 2. The formula was seen second-hand."""
+    assert is456.service_stress(415, 900, 900) == pytest.approx(0.58 * 415)
+    assert is456.service_stress(500, 800, 1000) == pytest.approx(232)
+    assert is456.tension_factor(240, 1.0) == pytest.approx(1 / 0.9978)
+    assert is456.tension_factor(145, 1.0) == pytest.approx(1 / 0.6919)
+    assert is456.tension_factor(290, 10.0) == pytest.approx(1 / 1.7838)
+    assert is456.tension_factor(120, 0.3) == 2.0
+    assert is456.tension_factor(240, 0.0) == 2.0
+
+
+@pytest.mark.source("IS 456:2000, 26.3.1", page_seen=True)
+def test_a_bundle_counts_as_one_bar_of_equal_area() -> None:
+    assert is456.bundle_diameter(16, 4) == 32
+    assert is456.bundle_diameter(20, 2) == pytest.approx(28.28, abs=0.005)
+    assert is456.BUNDLE_MAX_DIA == 32
+    assert is456.cover_for_bar(32).value == 32
