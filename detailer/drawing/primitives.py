@@ -116,7 +116,9 @@ class Dimension:
     @property
     def distance(self) -> float:
         """Return the distance it measures. [true mm]"""
-        return abs(self.end[1] - self.start[1]) if self.vertical else abs(self.end[0] - self.start[0])
+        return (
+            abs(self.end[1] - self.start[1]) if self.vertical else abs(self.end[0] - self.start[0])
+        )
 
     @property
     def printed(self) -> str:
