@@ -7,6 +7,7 @@ from __future__ import annotations
 
 from typing import NamedTuple
 
+from detailer.drawing.metrics import width
 from detailer.drawing.primitives import XY, Align, Dimension, Label
 from detailer.drawing.text import plain
 
@@ -21,6 +22,9 @@ TICK = 1.0
 
 AIR = 0.7
 """Between the line and its text. [mm on paper]"""
+
+LIFT = 1.3
+"""The same where the text is too wide to stand between the ticks. [mm on paper]"""
 
 Segment = tuple[XY, XY]
 
@@ -50,10 +54,12 @@ def parts(item: Dimension, scale: float) -> Parts:
     dimension = ((ends[0], line), (ends[1], line))
     flat = (extensions[0], extensions[1], dimension, ticks[0], ticks[1])
     middle = (ends[0] + ends[1]) / 2
+    wide = width(plain(item.printed), item.height) + 2 * TICK
+    air = (AIR if wide <= item.distance / scale else LIFT) * scale
     if not item.vertical:
-        return Parts(flat, _label(item, (middle, line + AIR * scale), 0.0))
+        return Parts(flat, _label(item, (middle, line + air), 0.0))
     a, b, c, d, e = (((p[1], p[0]), (q[1], q[0])) for p, q in flat)
-    return Parts((a, b, c, d, e), _label(item, (line - AIR * scale, middle), 90.0))
+    return Parts((a, b, c, d, e), _label(item, (line - air, middle), 90.0))
 
 
 def _label(item: Dimension, at: XY, angle: float) -> Label:

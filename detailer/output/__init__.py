@@ -1,1 +1,1 @@
-
+"""One module a format; they write what is there and decide nothing."""

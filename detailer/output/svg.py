@@ -51,7 +51,7 @@ BETWEEN = 10.0
 DASHES = {Pen.HIDDEN: "2 1", Pen.AXIS: "8 1.2 0.6 1.2"}
 """Patterns of lines that are not whole. [mm on paper]"""
 
-FONT = "'DejaVu Sans Condensed','Arial','Liberation Sans',sans-serif"
+FONT = "'DejaVu Sans Condensed','DejaVu Sans','Arial','Liberation Sans',sans-serif"
 ANCHOR = {Align.LEFT: "start", Align.CENTRE: "middle", Align.RIGHT: "end"}
 
 
