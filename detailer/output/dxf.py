@@ -121,6 +121,7 @@ def _sheet(doc: Any, layout: Any, sheet: Sheet) -> None:
     layout.page_setup(size=(wide, tall), margins=(0, 0, 0, 0), units="mm")
     layout.reset_extents((0.0, 0.0, 0.0), (wide, tall, 0.0))
     layout.reset_limits((0.0, 0.0), (wide, tall))
+    layout.dxf_layout.dxf.layout_flags = 0  # patterns are not scaled by viewports
     Pencil(doc, layout, 1.0, (0.0, 0.0)).draw(sheet.items)
     space = doc.modelspace()
     for placed in sheet.views:

@@ -23,6 +23,7 @@ from detailer.drawing.text import plain
 from detailer.output.layers import (
     APPID,
     BOLD,
+    NARROW,
     OF_PEN,
     REGULAR,
     STEEL,
@@ -148,6 +149,7 @@ class Pencil:
             "layer": layer.name,
             "style": BOLD if item.bold else REGULAR,
             "height": _r(item.height * scale),
+            "width": NARROW,
         }
         if item.angle:
             looks["rotation"] = _r(item.angle)

@@ -38,7 +38,10 @@ APPID = "DETAILER"
 """Whose extended data an entity carries: ``member=…`` and ``mark=…``."""
 
 FONTS = MappingProxyType({"DETAILER": "arial.ttf", "DETAILER-BOLD": "arialbd.ttf"})
-"""Text styles: fonts that CAD systems have, no wider than the widths texts are laid out with."""
+"""Text styles: fonts that CAD systems have."""
+
+NARROW = 0.9
+"""Width factor that brings these fonts to the widths texts are laid out with."""
 
 REGULAR, BOLD = FONTS
 
@@ -100,7 +103,7 @@ def define(doc: Any) -> None:
         made = doc.layers.add(layer.name, color=7, linetype=layer.linetype, lineweight=layer.weight)
         made.dxf.plot = int(layer is not VIEWPORTS)
     for name, font in FONTS.items():
-        doc.styles.add(name, font=font)
+        doc.styles.add(name, font=font, dxfattribs={"width": NARROW})
 
 
 def dimension_style(doc: Any, scale: float, height: float) -> str:

@@ -4,9 +4,9 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 
+from detailer.drawing.metrics import width as text_width
 from detailer.drawing.primitives import XY, Label, Path, Pen, Primitive, Tag
 from detailer.model import Beam, Project
-from detailer.views.metrics import width as text_width
 from detailer.views.notes import wrapped
 from detailer.views.paper import FRAME, TITLE_BLOCK, Paper, frame_of, title_corner
 

@@ -5,8 +5,8 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from detailer.cage.bar import Bar
+from detailer.drawing.metrics import width as text_width
 from detailer.drawing.primitives import XY, Align, Disc, Label, Path, Pen, Primitive, Tag
-from detailer.views.metrics import width as text_width
 
 TEXT = 2.5
 """Height of ordinary text. [mm on paper]"""

@@ -8,13 +8,13 @@ from dataclasses import dataclass
 from detailer.cage.bar import Cage
 from detailer.cage.cut import bars_at
 from detailer.cage.line import centre_line
+from detailer.drawing.metrics import width as text_width
 from detailer.drawing.primitives import XY, Label, Primitive, Tag
 from detailer.findings import Finding
 from detailer.model import Assumption, Beam, Project
 from detailer.values import ContactKind, Face, Role, Severity
 from detailer.views.kit import TEXT
 from detailer.views.lanes import Strand
-from detailer.views.metrics import width as text_width
 from detailer.views.outline import clear_spans
 from detailer.views.stops import laps_of
 

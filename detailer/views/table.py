@@ -8,11 +8,11 @@ from itertools import pairwise
 
 from detailer.cage.bar import Bar, Cage
 from detailer.cage.measure import outer_box
+from detailer.drawing.metrics import width as text_width
 from detailer.drawing.primitives import XY, Align, Label, Path, Pen, Primitive, Tag
 from detailer.schedule.rows import Row
 from detailer.values import Role
 from detailer.views.kit import TEXT
-from detailer.views.metrics import width as text_width
 from detailer.views.trace import section_trace
 
 ROW = 6.0

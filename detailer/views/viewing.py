@@ -6,6 +6,7 @@ from collections.abc import Iterable, Iterator
 from itertools import pairwise
 from math import cos, radians, sin
 
+from detailer.drawing.metrics import width
 from detailer.drawing.primitives import (
     XY,
     Align,
@@ -17,7 +18,6 @@ from detailer.drawing.primitives import (
     Tag,
     View,
 )
-from detailer.views.metrics import width
 
 TITLE = 3.5
 """Height of a view's title. [mm on paper]"""

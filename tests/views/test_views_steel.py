@@ -20,7 +20,7 @@ from detailer.views.bent import bent_bars, bent_items
 from detailer.views.chains import elevation_items
 from detailer.views.cuts import cuts_of, signature
 from detailer.views.elevation import Stage, picture, stage_of
-from detailer.views.metrics import width as text_width
+from detailer.drawing.metrics import width as text_width
 from detailer.views.outline import clear_spans
 from detailer.views.pulled import pulled_bars, pulled_items
 from detailer.views.section import groups_of, section_items, spacers_at
