@@ -15,9 +15,6 @@ from typing import NamedTuple
 CAPITALS = 0.729
 """Height of capitals. [em]"""
 
-RESERVE = 1.05
-"""What a box keeps for a text over its width, since a viewer may use a font of its own."""
-
 
 class Face(NamedTuple):
     """Advances of one face. [em]"""
@@ -54,23 +51,3 @@ def width(text: str, height: float, *, bold: bool = False) -> float:
     face = _face("bold" if bold else "regular")
     step, widest = face.advance, face.widest
     return sum(step.get(char, widest) for char in text) * height / CAPITALS
-
-
-def reserved(text: str, height: float, *, bold: bool = False) -> float:
-    """Return the width a box should keep for a text.
-
-    Parameters
-    ----------
-    text : str
-        One line.
-    height : float
-        Of its capitals. [mm]
-    bold : bool
-        Whether it is bold.
-
-    Returns
-    -------
-    float
-        [mm]
-    """
-    return RESERVE * width(text, height, bold=bold)
