@@ -4,11 +4,12 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 
+from detailer.drawing.border import EDGE, border_items
 from detailer.drawing.metrics import width as text_width
 from detailer.drawing.primitives import XY, Label, Path, Pen, Primitive, Tag
 from detailer.model import Beam, Project
 from detailer.views.notes import wrapped
-from detailer.views.paper import FRAME, TITLE_BLOCK, Paper, frame_of, title_corner
+from detailer.views.paper import TITLE_BLOCK, Paper, frame_of, title_corner
 
 SMALL = 2.5
 LARGE = 3.5
@@ -36,10 +37,8 @@ def frame_items(
     scales : str
         Scales of its views.
     """
-    room = frame_of(paper)
-    corners = ((room.x0, room.y0), (room.x1, room.y0), (room.x1, room.y1), (room.x0, room.y1))
     return (
-        Path(points=corners, pen=Pen.FRAME, closed=True),
+        *border_items(paper.size),
         *_block(project, beam, paper, title, scales),
     )
 
@@ -124,5 +123,5 @@ def status_item(paper: Paper, member: str) -> Label:
         What the sheet shows.
     """
     room = frame_of(paper)
-    at = (room.x0 + PAD, room.y0 - FRAME + (FRAME - SMALL) / 2)
+    at = (room.x0 + PAD, room.y0 - (EDGE + SMALL) / 2)
     return Label(at=at, text=STATUS, height=SMALL, bold=True, tag=Tag(member))

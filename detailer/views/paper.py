@@ -4,18 +4,15 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
+from detailer.drawing.border import BINDING, EDGE
 from detailer.drawing.primitives import XY
 from detailer.views.pack import Room
 
 MARGIN = 12.0
 """From the edge of the paper to what is drawn; the frame lies between. [mm]"""
 
-BINDING = 22.0
+BINDING_MARGIN = 22.0
 """The same at the left, where sheets are bound. [mm]"""
-
-
-FRAME = 7.0
-"""From the edge of the paper to the frame, but for the binding edge. [mm]"""
 
 
 @dataclass(frozen=True, slots=True)
@@ -46,7 +43,7 @@ def space_of(paper: Paper) -> Room:
         The paper.
     """
     w, h = paper.size
-    return Room(BINDING, MARGIN, w - MARGIN, h - MARGIN)
+    return Room(BINDING_MARGIN, MARGIN, w - MARGIN, h - MARGIN)
 
 
 TITLE_BLOCK = (185.0, 60.0)
@@ -62,7 +59,7 @@ def frame_of(paper: Paper) -> Room:
         The paper.
     """
     w, h = paper.size
-    return Room(BINDING - MARGIN + FRAME, FRAME, w - FRAME, h - FRAME)
+    return Room(BINDING, EDGE, w - EDGE, h - EDGE)
 
 
 def title_corner(paper: Paper) -> XY:
