@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import os
 import shutil
 import tempfile
 from contextlib import contextmanager, suppress
@@ -136,14 +135,14 @@ def _move(names: tuple[str, ...], work: Path, target: Path) -> None:
             old: Path | None = None
             if place.exists():
                 old = work / f"old-{number}"
-                os.replace(place, old)
+                place.replace(old)
             replaced.append((place, old))
-            os.replace(work / "new" / name, place)
+            (work / "new" / name).replace(place)
     except BaseException:
         for place, old in reversed(replaced):
             place.unlink(missing_ok=True)
             if old is not None:
-                os.replace(old, place)
+                old.replace(place)
         for folder in folders:
             with suppress(OSError):
                 folder.rmdir()

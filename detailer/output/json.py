@@ -5,11 +5,34 @@ from __future__ import annotations
 import json
 from collections.abc import Iterable
 from math import isfinite
-from typing import Any
+from typing import Any, Protocol
 
 from detailer.findings import Finding
-from detailer.model import Project
 from detailer.values import CAUTION
+
+
+class Assumed(Protocol):
+    """Something taken for granted."""
+
+    @property
+    def number(self) -> int: ...  # noqa: D102
+    @property
+    def member(self) -> str: ...  # noqa: D102
+    @property
+    def text(self) -> str: ...  # noqa: D102
+
+
+class Doubted(Protocol):
+    """A question about the input."""
+
+    @property
+    def file(self) -> str: ...  # noqa: D102
+    @property
+    def line(self) -> int | None: ...  # noqa: D102
+    @property
+    def field(self) -> str: ...  # noqa: D102
+    @property
+    def text(self) -> str: ...  # noqa: D102
 
 
 def findings(found: Iterable[Finding]) -> bytes:
@@ -23,25 +46,29 @@ def findings(found: Iterable[Finding]) -> bytes:
     return _bytes([_finding(item) for item in found])
 
 
-def assumptions(project: Project) -> bytes:
+def assumptions(project: str, assumed: Iterable[Assumed], doubts: Iterable[Doubted]) -> bytes:
     """Return assumptions.json: the caution, what was assumed by number, what is in doubt.
 
     Parameters
     ----------
-    project : Project
-        The project as read.
+    project : str
+        Number of the project.
+    assumed : iterable of Assumed
+        What was taken for granted.
+    doubts : iterable of Doubted
+        Questions about the input.
     """
     return _bytes(
         {
             "caution": CAUTION,
-            "project": project.number,
+            "project": project,
             "assumptions": [
                 {"number": f"A{item.number}", "member": item.member, "text": item.text}
-                for item in project.assumptions
+                for item in assumed
             ],
             "doubts": [
                 {"file": item.file, "line": item.line, "field": item.field, "text": item.text}
-                for item in project.doubts
+                for item in doubts
             ],
         }
     )

@@ -115,7 +115,7 @@ def _bend_term(bend: Bend, dia: float) -> float:
             # Allowance beyond the bend's outer face holds a tail of 4 d; the leg measures the
             # tail from the outer face too: tail + R + d.
             standard_leg = 4 * dia + bend.radius + dia
-            return is2502.hook_allowance(dia, bend.radius / dia) - standard_leg
+            return is2502.hook_allowance(dia, round(bend.radius / dia)) - standard_leg
         case Kind.SLANT:
             axis = bend.radius + dia / 2
             return axis * radians(bend.angle) - 2 * axis * tan_half(bend.angle)
