@@ -11,6 +11,7 @@ from importlib.resources import files
 from pathlib import Path
 
 from detailer import pipeline
+from detailer.checks import CHECKS
 from detailer.errors import InputError, Refused
 from detailer.findings import Finding
 from detailer.model import Project
@@ -98,6 +99,11 @@ def check(project: str | Path | None = None, *, progress: Progress = quiet) -> t
         With every error of the input.
     """
     return pipeline.findings_of(pipeline.placed(read(project), progress), progress)
+
+
+def questions() -> tuple[str, ...]:
+    """Return every question that the checks ask; what is not among them is not checked."""
+    return tuple(question for question, _ in CHECKS)
 
 
 def schedule(project: str | Path | None = None, *, progress: Progress = quiet) -> Scheduled:

@@ -77,6 +77,7 @@ def _run(given: argparse.Namespace) -> int:
         case "check":
             found = api.check(given.project, progress=_Reporter())
             _print_findings(found)
+            print(f"Asked: {'; '.join(api.questions())}. What is not named is not checked.")
             return FOUND if any(item.severity.blocks for item in found) else CLEAN
         case "schedule":
             _print_schedule(api.schedule(given.project, progress=_Reporter()))

@@ -9,7 +9,7 @@ from typing import TypeAlias
 
 from detailer.cage.bar import Cage
 from detailer.cage.wire import to_json
-from detailer.checks import Case, run
+from detailer.checks import CHECKS, Case, run
 from detailer.findings import Finding, ordered
 from detailer.model import Beam, Project
 from detailer.output import csv, html, json
@@ -122,6 +122,7 @@ def write(
         content = html.Page(
             head=_head(project),
             findings=found,
+            asked=tuple(question for question, _ in CHECKS),
             members=tuple(
                 _member(batch, beam, stem) for beam, stem in zip(project.beams, stems, strict=True)
             ),

@@ -57,6 +57,7 @@ class Page:
 
     head: Head
     findings: tuple[Finding, ...]  # ordered
+    asked: tuple[str, ...]  # every question the checks ask
     members: tuple[Member, ...]
     rows: tuple[Row, ...]
     summary: Summary
@@ -111,7 +112,7 @@ def _top(content: Page) -> Iterator[str]:
         count = sum(1 for item in content.findings if item.member == member.mark)
         yield (
             f"<li><a href='#{member.anchor}'>{escape(member.mark)}"
-            f" <span class='n'>{count or 'clean'}</span></a></li>"
+            f" <span class='n'>{count or ''}</span></a></li>"
         )
     yield "<li><a href='#masses'>Masses</a></li><li><a href='#assumptions'>Assumptions</a></li>"
     yield "<li><a href='#files'>Files</a></li></ul></nav>\n<main>"
@@ -126,8 +127,11 @@ def _findings(content: Page) -> Iterator[str]:
             f"<br><small>{MEANS[severity]}</small></li>"
         )
     yield "</ul>\n"
+    asked = "; ".join(content.asked)
+    yield f"<p class='asked'><b>Asked:</b> {escape(asked)}. "
+    yield "What is not named here is not checked.</p>"
     if not content.findings:
-        yield "<h3>None</h3><p class='good'>No check found anything to report.</p>"
+        yield "<p class='good'>None of these questions found anything to report.</p>"
     for mark, of_member in groupby(content.findings, key=lambda item: item.member):
         yield f"<h3>{escape(mark)}</h3>"
         for place, items in groupby(of_member, key=lambda item: item.place):
@@ -231,7 +235,7 @@ def _row(row: Row) -> str:
     hand = "opposite hand, for mirrored members. " if row.mirrored else ""
     return (
         f'<tr data-mark="{mark}" data-say="{escape(say, quote=True)}"><td>{_mark(row.mark)}</td>'
-        f"<td>{escape(row.grade)} Ø{row.dia:g}<br><small>{row.role.value}</small></td>"
+        f"<td class='size'>{escape(row.grade)} Ø{row.dia:g}<br><small>{row.role.value}</small></td>"
         f"<td>{escape(row.shape.code)}</td><td class='dims'>{letters}</td>"
         f"<td class='num'>{row.length:g}</td><td class='num'>{row.exact:.1f}</td>"
         f"<td class='num'>{row.per_member}</td><td class='num'>{row.members}</td>"
