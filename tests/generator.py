@@ -56,8 +56,9 @@ class Draft:
         longest = max(self.spans)
         depth = max(300, int(longest * 1000 / rng.uniform(10, 13) / 50) * 50)
         step = rng.random() < 0.15 and self.count > 1
-        self.depths = [depth - (100 if step and k % 2 and depth > 450 else 0)
-                       for k in range(self.count)]
+        self.depths = [
+            depth - (100 if step and k % 2 and depth > 450 else 0) for k in range(self.count)
+        ]
         self.flange = rng.random() < 0.4
         self.dead = round(rng.uniform(8, 22) * self.width / 300, 1)
         self.live = round(self.dead * rng.uniform(0.3, 0.8), 1)
@@ -79,7 +80,7 @@ purpose  = "test"
 [concrete]
 grade      = "M{self.fck}"
 aggregate  = 20
-exposure   = "{'mild' if self.cover < 30 else 'moderate'}"
+exposure   = "{"mild" if self.cover < 30 else "moderate"}"
 fire_hours = 1
 
 [steel]
@@ -142,18 +143,26 @@ cover = 40
         for k, s in enumerate(self.spans):
             own = ""
             if self.depths[k] != self.depths[0]:
-                own = ", section = { " + section.replace(
-                    f"depth = {self.depths[0]}", f"depth = {self.depths[k]}") + " }"
+                own = (
+                    ", section = { "
+                    + section.replace(f"depth = {self.depths[0]}", f"depth = {self.depths[k]}")
+                    + " }"
+                )
             point = ""
             if rng.random() < 0.15:
-                point = (f", point = [{{ x = {s * 500:.0f}, dead = {self.dead:.0f}, "
-                         f"imposed = {self.live:.0f} }}]")
+                point = (
+                    f", point = [{{ x = {s * 500:.0f}, dead = {self.dead:.0f}, "
+                    f"imposed = {self.live:.0f} }}]"
+                )
             spans.append(f"  {{ length = {s * 1000:.0f}, {load}{point}{own} }}")
         if self.tips[1]:
             own = ""
             if self.depths[-1] != self.depths[0]:
-                own = ", section = { " + section.replace(
-                    f"depth = {self.depths[0]}", f"depth = {self.depths[-1]}") + " }"
+                own = (
+                    ", section = { "
+                    + section.replace(f"depth = {self.depths[0]}", f"depth = {self.depths[-1]}")
+                    + " }"
+                )
             spans.append(f"  {{ overhang = {self.tips[1] * 1000:.0f}, {load}{own} }}")
         lines = [
             "[[beam]]",
@@ -191,8 +200,14 @@ cover = 40
         deep = max(self.depths)
         if deep > 750:
             each = max(2, -(-(deep - 150) // 300))
-            out.append(self.table("side", f'span = "1-{total}"' if total > 1 else "span = 1",
-                                  each, 10 if self.width < 350 else 12))
+            out.append(
+                self.table(
+                    "side",
+                    f'span = "1-{total}"' if total > 1 else "span = 1",
+                    each,
+                    10 if self.width < 350 else 12,
+                )
+            )
         return "".join(out)
 
     @staticmethod
@@ -202,13 +217,19 @@ cover = 40
     def links(self, lead: int) -> str:
         out = []
         w = 1.5 * (self.dead + self.live)
-        lengths = ([self.tips[0]] if self.tips[0] else []) + self.spans + (
-            [self.tips[1]] if self.tips[1] else [])
+        lengths = (
+            ([self.tips[0]] if self.tips[0] else [])
+            + self.spans
+            + ([self.tips[1]] if self.tips[1] else [])
+        )
         for number, length in enumerate(lengths, 1):
             k = min(max(number - 1 - lead, 0), self.count - 1)
             d = self.depths[k] - self.cover - 20
-            shear = (0.65 * w * length + 5) * 1e3 * (1.7 if number - 1 - lead not in range(
-                self.count) else 1.0)
+            shear = (
+                (0.65 * w * length + 5)
+                * 1e3
+                * (1.7 if number - 1 - lead not in range(self.count) else 1.0)
+            )
             rest = shear - 0.4 * self.width * d
             dia = 8 if self.width < 350 else 10
             asv = 2 * area(dia)
@@ -219,8 +240,9 @@ cover = 40
             loose = min(tight + 50, int(min(floor, 0.75 * d, 300.0) // 25) * 25)
             end = int(length * 1000 * 0.3 / 50) * 50
             if number - 1 - lead in range(self.count) and loose > tight and length > 3:
-                zones = (f'"2L-T{dia}@{tight} x {end}", "2L-T{dia}@{loose}", '
-                         f'"2L-T{dia}@{tight} x {end}"')
+                zones = (
+                    f'"2L-T{dia}@{tight} x {end}", "2L-T{dia}@{loose}", "2L-T{dia}@{tight} x {end}"'
+                )
             else:
                 zones = f'"2L-T{dia}@{tight}"'
             out.append(f"\n  [[beam.links]]\n  span = {number}\n  zones = [{zones}]\n")

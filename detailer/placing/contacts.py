@@ -29,7 +29,7 @@ def laps(pairs: tuple[tuple[str, Strand], ...]) -> Iterator[Contact]:
                 continue
             window = _touching(a, b)
             if window is not None:
-                yield Contact(ContactKind.LAP, *sorted((a_id, b_id)), *window)
+                yield Contact(ContactKind.LAP, min(a_id, b_id), max(a_id, b_id), *window)
 
 
 def _touching(a: Strand, b: Strand) -> tuple[float, float] | None:
@@ -67,4 +67,5 @@ def crossings(spacers: tuple[Bar, ...], pairs: tuple[tuple[str, Strand], ...]) -
                 if s.covers(x) and abs(abs(s.at(x)[1] - z) - (s.dia + spacer.dia) / 2) < TOUCHING:
                     touched.setdefault(id_, []).append(x)
         for id_, at in sorted(touched.items()):
-            yield Contact(ContactKind.CROSSING, *sorted((spacer.id, id_)), min(at), max(at))
+            first, second = sorted((spacer.id, id_))
+            yield Contact(ContactKind.CROSSING, first, second, min(at), max(at))

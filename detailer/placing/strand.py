@@ -75,7 +75,7 @@ def path(strand: Strand) -> forms.Path:
         The bar; a top bar's legs turn down, a bottom bar's up.
     """
     y, z = strand.at(strand.x0)
-    cranks = ()
+    cranks: tuple[forms.Crank, ...] = ()
     if strand.crank:
         dy, dz = strand.aside
         cranks = (forms.Crank(x=strand.aside_to, dy=-dy, dz=-dz),)

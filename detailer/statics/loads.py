@@ -169,7 +169,7 @@ def support_moments(
     if span.overhang:
         tip = _from_tip(span, points)
         end = tip_moment(span.length, udl, tip, np.array([span.length]))[0]
-        right[span.right if span.left is None else span.left] = end  # type: ignore[index]
+        right[span.right if span.left is None else span.left] = end
     for (n0, s0), (n1, s1) in itertools.pairwise(inner):
         k = s0.right
         if k is None:
@@ -182,7 +182,7 @@ def support_moments(
             right[k] -= _rotations(s0.length, udl, points)[0] / i0
         if n1 == loaded:
             right[k] -= _rotations(s1.length, udl, points)[1] / i1
-    return np.linalg.solve(matrix, right)
+    return np.asarray(np.linalg.solve(matrix, right), dtype=np.float64)
 
 
 def _from_tip(
@@ -251,7 +251,7 @@ def responses(
         )
         return m, sign * v
     ends = support_moments(beam, loaded, udl, points)
-    a, b = float(ends[span.left]), float(ends[span.right])  # type: ignore[index]
+    a, b = float(ends[span.left]), float(ends[span.right])
     m = a + (b - a) * xs / span.length
     v = np.full(len(xs), (b - a) / span.length)
     if own:

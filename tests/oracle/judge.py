@@ -7,6 +7,7 @@ be wrong; what it calls clean must raise no unsafe and no unbuildable finding.
 
 from __future__ import annotations
 
+import itertools
 import tomllib
 from math import ceil, hypot, pi
 from typing import Any
@@ -335,9 +336,7 @@ class Judge:
         tau = float(np.interp(pt, TAU_C_PT, TAU_C[self.line.fck]))
         near = [g for g in self.links if abs(g[0] - x) < 700]
         pairs = [
-            (b[0] - a[0], a[1])
-            for a, b in zip(near, near[1:], strict=False)
-            if a[0] - 1 <= x <= b[0] + 1
+            (b[0] - a[0], a[1]) for a, b in itertools.pairwise(near) if a[0] - 1 <= x <= b[0] + 1
         ]
         if not pairs:
             pairs = [(60.0 + abs(near[0][0] - x), near[0][1])] if near else [(1e9, 8.0)]
@@ -438,7 +437,7 @@ class Judge:
                 if steel < 0.86 * section["width"] * (section["depth"] - 35) / self.line.fy:
                     return [f"little {face} steel at {x:.0f}"]
                 ys = sorted(b.at(x)[0] for b in rods)
-                wide = max((b - a for a, b in zip(ys, ys[1:], strict=False)), default=0.0)
+                wide = max((b - a for a, b in itertools.pairwise(ys)), default=0.0)
                 if wide > WIDEST[self.line.fy] - 5:
                     return [f"{face} bars {wide:.0f} apart at {x:.0f}"]
         return []
@@ -469,7 +468,7 @@ class Judge:
             for support, face, side in ((span["left"], x0, -1), (span["right"], x1, 1)):
                 if support is None:
                     continue
-                inside = [b for b in self.here((x0 + x1) / 2, "bottom")]
+                inside = list(self.here((x0 + x1) / 2, "bottom"))
                 total = sum(area(b.dia) for b in inside)
                 kept = 0.0
                 for b in inside:

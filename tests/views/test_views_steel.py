@@ -14,13 +14,13 @@ from example_cage import LEFT, LEFT2, RIGHT, RIGHT2, example_cage
 
 from detailer.cage.bar import Cage
 from detailer.cage.cut import cut
+from detailer.drawing.metrics import width as text_width
 from detailer.drawing.primitives import Dimension, Disc, Label, Path, Pen, Primitive
 from detailer.values import Face, Role
 from detailer.views.bent import bent_bars, bent_items
 from detailer.views.chains import elevation_items
 from detailer.views.cuts import cuts_of, signature
 from detailer.views.elevation import Stage, picture, stage_of
-from detailer.drawing.metrics import width as text_width
 from detailer.views.outline import clear_spans
 from detailer.views.pulled import pulled_bars, pulled_items
 from detailer.views.section import groups_of, section_items, spacers_at
