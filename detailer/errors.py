@@ -20,7 +20,7 @@ class InputError(ValueError):
         return f"{where}: {self.field}: {self.problem}. {self.remedy}."
 
 
-class Refused(Exception):
+class Refused(Exception):  # noqa: N818  what it is to the user, not a failure
     """All the input errors of one run, in the order of files and lines."""
 
     def __init__(self, errors: Iterable[InputError]) -> None:
