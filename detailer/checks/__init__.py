@@ -4,7 +4,19 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterator
 
-from detailer.checks import clash, cover, spacing, stock
+from detailer.checks import (
+    anchorage,
+    clash,
+    cover,
+    cutoffs,
+    deflection,
+    depth,
+    laps,
+    resistance,
+    shear,
+    spacing,
+    stock,
+)
 from detailer.checks.case import Case
 from detailer.findings import Finding, ordered
 
@@ -15,6 +27,13 @@ CHECKS: tuple[tuple[str, Callable[[Case], Iterator[Finding]]], ...] = (
     ("cover as placed", cover.check),
     ("clear spacing in a layer", spacing.check),
     ("bars longer than the stock", stock.check),
+    ("bending resistance along the line", resistance.check),
+    ("depth placed and depth assumed", depth.check),
+    ("where bars stop", cutoffs.check),
+    ("anchorage at supports", anchorage.check),
+    ("laps", laps.check),
+    ("shear and torsion along the line", shear.check),
+    ("span to depth", deflection.check),
 )
 """Every question that is asked, in words for the page."""
 

@@ -3,14 +3,17 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cached_property
 
 from detailer.cage.bar import Cage
 from detailer.findings import Place
 from detailer.model import Beam, Project
 from detailer.statics import Envelope
+from detailer.strength.shear import Shear, shear_of
+from detailer.strength.slices import Steel, steel_of
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
+@dataclass(frozen=True, kw_only=True)
 class Case:
     """One member with its steel placed."""
 
@@ -18,6 +21,16 @@ class Case:
     beam: Beam
     envelope: Envelope | None
     cage: Cage
+
+    @cached_property
+    def steel(self) -> Steel:
+        """Return the bars and what they develop, read off the cage."""
+        return steel_of(self.project, self.beam, self.cage)
+
+    @cached_property
+    def shear(self) -> Shear:
+        """Return the links and what they carry, read off the cage."""
+        return shear_of(self.steel)
 
     def place(self, x: float) -> Place:
         """Return the support or the span that holds x.
