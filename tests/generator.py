@@ -38,7 +38,7 @@ class Draft:
         self.mark = mark
         self.fck = rng.choice((20, 25, 30, 35, 40))
         self.fy = rng.choice((415, 500, 500, 550))
-        self.count = rng.randint(1, 5)
+        self.count = rng.choice((1, 1, 2, 2, 2, 3, 3, 4, 5))
         self.width = rng.choice((200, 230, 250, 300, 300, 350, 400))
         self.cover = rng.choice((25, 30, 30, 40))
         base = rng.uniform(3.0, 6.5)
@@ -117,7 +117,7 @@ cover = 40
     def steel_for(self, moment: float, depth: float) -> float:
         d = depth - self.cover - 25
         least = 0.85 * self.width * d / self.fy
-        return max(1.08 * moment / (0.87 * self.fy * 0.86 * d), least)
+        return max(1.2 * moment / (0.87 * self.fy * 0.84 * d), 1.05 * least)
 
     def most(self, dia: int) -> int:
         """Return how many bars fit two layers."""
@@ -183,20 +183,24 @@ cover = 40
         heaviest = max(hog)
         if heaviest and 2 * area(through) < self.steel_for(heaviest, least) / 3:
             through = 20 if through == 16 else 16
-        out = [self.table("top", f'span = "1-{total}"' if total > 1 else "span = 1", 2, through)]
+        across = self.across(through)
+        out = [
+            self.table("top", f'span = "1-{total}"' if total > 1 else "span = 1", across, through)
+        ]
         for k, moment in enumerate(hog):
             depth = min(self.depths[max(0, k - 1)], self.depths[min(k, self.count - 1)])
-            need = self.steel_for(moment, depth) - 2 * area(through)
+            need = self.steel_for(moment, depth) - across * area(through)
             if moment > 0 and need > 0:
                 count, dia = choose(rng, need, max(2, self.most(20) - 2))
                 out.append(self.table("top", f'support = "{names[k]}"', count, dia))
         for k, moment in enumerate(sag):
             count, dia = choose(rng, self.steel_for(moment, self.depths[k]), self.most(20))
+            count = max(count, self.across(dia))
             out.append(self.table("bottom", f"span = {k + 1 + lead}", count, dia))
         bottom = next((d for d in (12, 16, 20) if 2 * area(d) >= worst), 20)
         for tip, number in ((self.tips[0], 1), (self.tips[1], total)):
             if tip:
-                out.append(self.table("bottom", f"span = {number}", 2, bottom))
+                out.append(self.table("bottom", f"span = {number}", self.across(bottom), bottom))
         deep = max(self.depths)
         if deep > 750:
             each = max(2, -(-(deep - 150) // 300))
@@ -209,6 +213,12 @@ cover = 40
                 )
             )
         return "".join(out)
+
+    def across(self, dia: int) -> int:
+        """Return how many bars keep the distance that limits cracks."""
+        widest = {415: 180, 500: 150, 550: 135}[self.fy] - 12
+        room = self.width - 2 * self.cover - 20
+        return max(2, -(-(room - dia) // (widest + dia)) + 1)
 
     @staticmethod
     def table(face: str, where: str, count: int, dia: int) -> str:
@@ -235,9 +245,9 @@ cover = 40
             asv = 2 * area(dia)
             space = 0.87 * 415 * asv * d / rest if rest > 0 else 300.0
             floor = asv * 0.87 * 415 / (0.4 * self.width)
-            space = min(space, floor, 0.75 * d, 300.0)
+            space = min(space, 0.95 * floor, 0.7 * (d - 30), 290.0)
             tight = max(75, int(space // 25) * 25)
-            loose = min(tight + 50, int(min(floor, 0.75 * d, 300.0) // 25) * 25)
+            loose = min(tight + 50, int(min(0.95 * floor, 0.7 * (d - 30), 290.0) // 25) * 25)
             end = int(length * 1000 * 0.3 / 50) * 50
             if number - 1 - lead in range(self.count) and loose > tight and length > 3:
                 zones = (

@@ -12,7 +12,7 @@ from detailer.checks.case import Case
 from detailer.findings import Finding, Place
 from detailer.rules import is456
 from detailer.strength.development import Rod
-from detailer.strength.slices import area
+from detailer.strength.slices import Floats, area
 from detailer.values import ContactKind, Face, Severity
 
 SLACK = 1.0
@@ -71,17 +71,33 @@ def _beside(a: Rod, b: Rod, x: float) -> bool:
     return hypot(ya - yb, za - zb) < (a.dia + b.dia) / 2 + 1
 
 
+PASSING_USE = 0.3
+"""Bars that overlap over a support pass each other, and are no splice, up to this use."""
+
+
 def _anchored_apart(case: Case, x0: float, x1: float, bar: str) -> bool:
-    """Return whether bars only pass each other in or by a support, where their face is pressed."""
-    near = any(s.left - 600 <= x0 and x1 <= s.right + 600 for s in case.beam.supports)
-    if not near:
+    """Return whether bars only pass each other over a support, each anchored by itself.
+
+    Where their face is hardly in tension nothing is handed from one to the other; what they
+    must resist there is the bending check's question.
+    """
+    if not any(x0 < s.right + 50 and x1 > s.left - 50 for s in case.beam.supports):
         return False
-    if case.envelope is None:
-        return True
     face = case.cage.bar(bar).face
-    least, most = case.envelope.moments(np.linspace(x0, x1, 5))
-    tension = most if face is Face.BOTTOM else -least
-    return bool(np.all(tension <= 1e5))
+    if case.envelope is None:
+        return face is Face.BOTTOM
+    return _use(case, face, np.linspace(x0, x1, 5)) <= PASSING_USE
+
+
+def _use(case: Case, face: Face, xs: Floats) -> float:
+    """Return the greatest share of the resistance that the envelope uses over places."""
+    if case.envelope is None:
+        return 0.0
+    sagging = face is Face.BOTTOM
+    least, most = case.envelope.moments(xs)
+    asked = np.maximum(most if sagging else -least, 0.0)
+    full = np.array([r.moment for r in case.steel.profile(xs, sagging=sagging, full=True)])
+    return float(np.max(asked / np.maximum(full, 1.0)))
 
 
 def check(case: Case) -> Iterator[Finding]:
@@ -196,12 +212,7 @@ def _where(case: Case, lap: Lap) -> Iterator[Finding]:
         return
     if case.envelope is None:
         return
-    xs = np.linspace(lap.x0, lap.x1, 9)
-    least, most = case.envelope.moments(xs)
-    sagging = lap.a.face is Face.BOTTOM
-    asked = np.maximum(most if sagging else -least, 0.0)
-    full = np.array([r.moment for r in case.steel.profile(xs, sagging=sagging, full=True)])
-    use = float(np.max(asked / np.maximum(full, 1.0)))
+    use = _use(case, lap.a.face, np.linspace(lap.x0, lap.x1, 9))
     if use <= is456.LAP_USE_LIMIT + 0.005:
         return
     yield Finding(

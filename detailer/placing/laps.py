@@ -61,12 +61,13 @@ def lap_length(project: Project, beam: Beam, strand: Strand) -> float:
 def lapped(strands: tuple[Strand, ...], lapping: Lapping) -> Iterator[tuple[Strand, ...]]:
     """Yield the pieces of each strand of a run, left to right; whole where it fits the stock.
 
-    Half of the strands lap at one set of places, the others at least 1.3 lap lengths off,
-    so that no more than half the bars are lapped at a section. Places that the engineer
+    No more than half of the strands lap at one set of places, the others at least 1.3 lap
+    lengths off. Places that the engineer
     gave are kept as given.
     """
     chosen = lapping.seated.run.chosen.laps
     patterns: list[tuple[float, ...]] = []
+    sets = ceil(len(strands) / max(1, len(strands) // 2))
     for number, strand in enumerate(strands):
         lap = lap_length(lapping.project, lapping.beam, strand)
         if chosen is not None:
@@ -74,10 +75,11 @@ def lapped(strands: tuple[Strand, ...], lapping: Lapping) -> Iterator[tuple[Stra
         elif _cut_length(strand) <= lapping.project.steel.stock:
             centres = ()
         else:
-            if len(patterns) <= number % 2:
+            at = number % sets
+            if len(patterns) <= at:
                 taken = tuple(x for p in patterns for x in p)
                 patterns.append(_choose(strand, lap, lapping, taken))
-            centres = patterns[number % 2]
+            centres = patterns[at]
         yield _pieces(strand, centres, lap)
 
 
