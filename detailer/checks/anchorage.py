@@ -297,7 +297,7 @@ def _no_moment(
 def _back_span(case: Case, span: Span, envelope: Envelope) -> Iterator[Finding]:
     """Yield an overhang whose main steel lies on the wrong face (fault 33)."""
     x0, x1 = case.beam.clear(span)
-    root = x1 if span.left is None else x0
+    root = x1 - 0.4 * (x1 - x0) if span.left is None else x0 + 0.4 * (x1 - x0)
     least, most = envelope.moment(root)
     if -least <= 1e6 or most > 0:
         return

@@ -390,8 +390,42 @@ def _extra_end(run: Run, around: Around, side: int) -> tuple[float, End]:
     if need >= limit and span.overhang:
         tip = beam.start if side < 0 else beam.end
         return tip - side * free_end(beam, run.face), _fixed_form(run, around, want)
-    reach = _pushed_out(run, around, span, need, face, side, (x1 - x0) / 2)
+    if not span.overhang and _never_falls(run, around, span, face, side):
+        reach = _meeting(run, around, span, face, side)
+    else:
+        reach = _pushed_out(run, around, span, need, face, side, (x1 - x0) / 2)
     return face + side * max(reach, 0.0), _fixed_form(run, around, want)
+
+
+def _never_falls(run: Run, around: Around, span: Span, face: float, side: int) -> bool:
+    """Return whether the bars that go on alone resist nowhere in a span."""
+    if around.demand is None:
+        return False
+    x0, x1 = around.beam.clear(span)
+    far = x1 if side > 0 else x0
+    capacity = around.demand.resists(span, run.face, around.going_on)
+    return around.demand.falls_to(run.face, face, far, capacity) == far
+
+
+def _meeting(run: Run, around: Around, span: Span, face: float, side: int) -> float:
+    """Return the reach of extras that are needed all across a span.
+
+    Where the next support has extras too, both lap where the tension is least; else they
+    run over that support and are developed beyond it.
+    """
+    beam, project, demand = around.beam, around.project, around.demand
+    step = project.practice.cut_step
+    full = development(project, max(run.dias))
+    other = span.right if side > 0 else span.left
+    x0, x1 = beam.clear(span)
+    met = any(b.face is run.face and b.support == other for b in beam.bars)
+    if demand is None or not met or other is None:
+        past = beam.supports[other].width if other is not None else 0.0
+        return rounded_out(x1 - x0 + past + full, step)
+    xs = np.linspace(x0, x1, 101)
+    calm = float(xs[int(np.argmin(demand.tension(run.face, xs)))])
+    calm = min(max(calm, x0 + full), x1 - full) if x1 - x0 > 2 * full else (x0 + x1) / 2
+    return rounded_out(abs(calm - face) + 0.7 * full, step)
 
 
 def support_need(run: Run, around: Around, span: Span, side: int, support: int) -> float:
