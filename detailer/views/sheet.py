@@ -16,7 +16,7 @@ from detailer.values import Face
 from detailer.views.bent import bent_items
 from detailer.views.chains import elevation_items
 from detailer.views.cuts import Cut, cuts_of
-from detailer.views.demand import Resistance, curves_of
+from detailer.views.demand import curves_of
 from detailer.views.diagram import Curves, diagram_items
 from detailer.views.elevation import picture, stage_of
 from detailer.views.frame import frame_items, status_item
@@ -94,7 +94,6 @@ def beam_drawing(
     rows: tuple[ScheduleRow, ...],
     *,
     assumptions: tuple[Assumption, ...],
-    resistance: Resistance | None = None,
 ) -> Drawing:
     """Return the drawing of a beam: one sheet, on the smallest paper that holds it.
 
@@ -112,8 +111,6 @@ def beam_drawing(
         The schedule, of any members.
     assumptions : tuple of Assumption
         Of the project and any members.
-    resistance : callable, optional
-        Moment the placed steel resists at x, and whether it sags there. [mm, N·mm]
     """
     clear = clear_spans(cage)
     cuts = cuts_of(cage, clear)
@@ -122,7 +119,7 @@ def beam_drawing(
         beam=beam,
         cage=cage,
         cuts=cuts,
-        curves=curves_of(beam, envelope, resistance),
+        curves=curves_of(project, beam, envelope, cage),
         notes=notes_of(project, beam, cage, strands, findings, assumptions),
         table=table_of(cage, rows),
     )

@@ -153,7 +153,6 @@ def test_the_diagram_shows_what_resists(made: Made) -> None:
         (),
         rows(cages),
         assumptions=(),
-        resistance=lambda x, sagging: 200e6 if sagging else 150e6,
     )
     (view,) = (p.view for p in drawing.sheets[0].views if p.view.name == "FB1 moments")
     lines = [
