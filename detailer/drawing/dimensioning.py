@@ -26,6 +26,9 @@ AIR = 0.7
 LIFT = 1.3
 """The same where the text is too wide to stand between the ticks. [mm on paper]"""
 
+BESIDE = 0.8
+"""Least sum of what is free beside a text between two extension lines. [mm on paper]"""
+
 Segment = tuple[XY, XY]
 
 
@@ -54,12 +57,45 @@ def parts(item: Dimension, scale: float) -> Parts:
     dimension = ((ends[0], line), (ends[1], line))
     flat = (extensions[0], extensions[1], dimension, ticks[0], ticks[1])
     middle = (ends[0] + ends[1]) / 2
-    wide = width(plain(item.printed), item.height) + 2 * TICK
-    air = (AIR if wide <= item.distance / scale else LIFT) * scale
+    up = _base(item, scale)
     if not item.vertical:
-        return Parts(flat, _label(item, (middle, line + air), 0.0))
+        return Parts(flat, _label(item, (middle, line + up), 0.0))
     a, b, c, d, e = (((p[1], p[0]), (q[1], q[0])) for p, q in flat)
-    return Parts((a, b, c, d, e), _label(item, (line - air, middle), 90.0))
+    return Parts((a, b, c, d, e), _label(item, (line - up, middle), 90.0))
+
+
+def narrow(item: Dimension, scale: float) -> bool:
+    """Return whether the text of a dimension is too wide to stand between its ticks.
+
+    Parameters
+    ----------
+    item : Dimension
+        The dimension.
+    scale : float
+        Of its view; 1 on paper.
+    """
+    return _wide(item) + 2 * TICK > item.distance / scale
+
+
+def _wide(item: Dimension) -> float:
+    return width(plain(item.printed), item.height)
+
+
+def _base(item: Dimension, scale: float) -> float:
+    """Return how far the base line of the text lies over the dimension line. [true mm]
+
+    A text too wide stands clear of the ticks; where it would touch extension lines that come
+    from its own side it stands on the other one, below the line or to the right of it.
+    """
+    if not narrow(item, scale):
+        return AIR * scale
+    if _wide(item) + BESIDE <= item.distance / scale:
+        return LIFT * scale
+    way = -1.0 if item.vertical else 1.0
+    across = [_along(item, p)[1] for p in (item.start, item.end)]
+    if max(way * (foot - item.line) for foot in across) - GAP * scale <= LIFT * scale:
+        return LIFT * scale
+    return -(LIFT + item.height) * scale
 
 
 def _label(item: Dimension, at: XY, angle: float) -> Label:

@@ -18,7 +18,7 @@ import svgwrite.path
 import svgwrite.shapes
 import svgwrite.text
 
-from detailer.drawing.dimensioning import parts
+from detailer.drawing.dimensioning import Segment, parts
 from detailer.drawing.metrics import CAPITALS, width
 from detailer.drawing.placed import require_finite
 from detailer.drawing.primitives import (
@@ -160,6 +160,7 @@ class Frame:
 
 
 def _fill(group: Any, items: tuple[Primitive, ...], frame: Frame) -> None:
+    drawn: set[Segment] = set()  # lines that dimensions of one chain share
     for item in items:
         match item:
             case Path():
@@ -169,7 +170,7 @@ def _fill(group: Any, items: tuple[Primitive, ...], frame: Frame) -> None:
             case Label():
                 group.add(_text(item, frame, _marked(item.tag)))
             case Dimension():
-                group.add(_dimension(item, frame))
+                group.add(_dimension(item, frame, drawn))
 
 
 def _path(item: Path, frame: Frame) -> Any:
@@ -223,15 +224,19 @@ def _text(item: Label, frame: Frame, looks: dict[str, Any]) -> Any:
     return _Text(text, insert=(x, y), font_size=size, debug=False, **looks)
 
 
-def _dimension(item: Dimension, frame: Frame) -> Any:
+def _dimension(item: Dimension, frame: Frame, drawn: set[Segment]) -> Any:
+    """Return a dimension without the lines that its neighbour in the chain has drawn."""
     group = _Group(debug=False, **_marked(item.tag, "dimension"))
-    drawn = parts(item, frame.scale)
+    made = parts(item, frame.scale)
     words = []
-    for a, b in drawn.lines:
-        (ax, ay), (bx, by) = frame.point(a), frame.point(b)
-        words.append(f"M{ax:g},{ay:g}L{bx:g},{by:g}")
-    group.add(_Path(d="".join(words), class_=_pen(Pen.DIMENSION), debug=False))
-    group.add(_text(drawn.label, frame, {}))
+    for a, b in made.lines:
+        (ax, ay), (bx, by) = ends = frame.point(a), frame.point(b)
+        if ends not in drawn:
+            drawn.add(ends)
+            words.append(f"M{ax:g},{ay:g}L{bx:g},{by:g}")
+    if words:
+        group.add(_Path(d="".join(words), class_=_pen(Pen.DIMENSION), debug=False))
+    group.add(_text(made.label, frame, {}))
     return group
 
 

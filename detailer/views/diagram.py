@@ -14,7 +14,7 @@ from detailer.views.elevation import Stage
 from detailer.views.kit import TEXT, Kit
 from detailer.views.labels import Wish, set_row
 
-HEIGHT = 28.0
+HEIGHT = 24.0
 """From the greatest hogging to the greatest sagging value. [mm on paper]"""
 
 FLAT = 0.5e6
@@ -62,7 +62,7 @@ def diagram_items(stage: Stage, curves: Curves) -> tuple[Primitive, ...]:
         *_cut_offs(stage, curves, scale),
         *_lines(curves, scale, kit),
         *_peaks(stage, curves, scale),
-        *_legend(stage, curves, scale.y(-up) + kit.mm(8.5)),
+        *_legend(stage, curves, scale.y(-up) + kit.mm(7.5)),
     )
 
 

@@ -187,7 +187,7 @@ def _cut_marks(stage: Stage) -> Iterator[Primitive]:
             yield kit.line((cut.x, far), foot, pen=Pen.BAR)
             base = near if way > 0 else near - kit.mm(TITLE)
             align = Align.LEFT if side > 0 else Align.RIGHT
-            at = (cut.x + side * kit.mm(1.0), base)
+            at = (cut.x + side * kit.mm(1.4), base)
             yield kit.text(at, cut.letter, height=TITLE, align=align, bold=True)
 
 
@@ -307,7 +307,7 @@ def _closed(stage: Stage) -> tuple[tuple[float, float], ...]:
     found = [(x - kit.mm(0.7), x + kit.mm(0.7)) for pair in stage.supports for x in pair]
     for cut in stage.cuts:
         side = letter_side(stage, cut)
-        reach = kit.mm(1.6) + kit.width(cut.letter, TITLE)
-        a, b = cut.x - side * kit.mm(0.9), cut.x + side * reach
+        reach = kit.mm(2.0) + kit.width(cut.letter, TITLE)
+        a, b = cut.x - side * kit.mm(1.6), cut.x + side * reach
         found.append((min(a, b), max(a, b)))
     return tuple(sorted(found))

@@ -211,15 +211,9 @@ def _told(findings: tuple[Finding, ...]) -> Iterator[str]:
             seen.add((f.rule, f.place.name))
             chosen.append(f)
     for f in chosen[:MOST_FINDINGS]:
-        bars = f" bars {', '.join(f.bars[:4])}" if f.bars else ""
-        values = f"{_number(f.found)} for {_number(f.required)} {f.unit}".strip()
-        yield f"{f.severity.value}, {f.place.name}: {f.rule.replace('-', ' ')}{bars}, {values}."
+        yield f"{f.severity.value.capitalize()}: {f.message} [{f.clause}]."
     if len(chosen) > MOST_FINDINGS:
         yield f"{len(chosen) - MOST_FINDINGS} more in the report."
-
-
-def _number(value: float) -> str:
-    return f"{value:.0f}" if abs(value) >= 100 else f"{value:.3g}"
 
 
 def wrapped(text: str, width: float, height: float = TEXT) -> tuple[str, ...]:

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass
 
+from detailer.drawing.dimensioning import BESIDE as BESIDE_TEXT
 from detailer.drawing.primitives import Align, Path, Pen, Primitive
 from detailer.values import Face
 from detailer.views.cutoffs import chain
@@ -96,7 +97,9 @@ def pulled_items(stage: Stage, faces: tuple[Face, ...]) -> tuple[Primitive, ...]
     items: list[Primitive] = []
     y = 0.0
     for row in _rows(stage, pulled_bars(stage, faces)):
-        below = max(max(p.rise()[0] for p in row), kit.mm(DIMS_BELOW + 0.5))
+        hung = any(_hangs(stage, p) for p in row)
+        dims = DIMS_BELOW + (1.5 + TEXT if hung else 0.5)
+        below = max(max(p.rise()[0] for p in row), kit.mm(dims))
         above = max(max(p.rise()[1] for p in row), kit.mm(TEXT_ABOVE + TEXT))
         level = y - above
         for p in row:
@@ -155,6 +158,13 @@ def _face_of(stage: Stage, x: float, way: int) -> float:
     return min((edge for pair in stage.supports for edge in pair), key=lambda e: (abs(e - x), e))
 
 
+def _hangs(stage: Stage, p: Pulled) -> bool:
+    """Return whether a number is too wide for its dimension and stands below the line."""
+    room = stage.kit.mm(BESIDE_TEXT)
+    far = (abs(x - _face_of(stage, x, way)) for x, way in zip(p.ends, (-1, 1), strict=True))
+    return any(1.0 <= size < stage.kit.width(f"{size:.0f}") + room for size in far)
+
+
 def _one(stage: Stage, p: Pulled, level: float) -> Iterator[Primitive]:
     """Yield one bar with its call-out, legs, and the distances of its ends from faces."""
     kit, s = stage.kit, p.strand
@@ -181,7 +191,7 @@ def _legs(kit: Kit, s: Strand, shape: Trace, level: float) -> Iterator[Primitive
     ):
         if is_bent:
             leg = abs(tip[1] - level) + s.bar.dia / 2
-            low_third = level + 0.7 * (tip[1] - level)
-            at = (edge + way * kit.mm(1.2), low_third - kit.mm(TEXT / 2))
+            base = tip[1] if tip[1] < level else tip[1] - kit.mm(TEXT)
+            at = (edge + way * kit.mm(1.2), base)
             align = Align.LEFT if way > 0 else Align.RIGHT
             yield kit.text(at, f"{leg:.0f}", align=align, tag=kit.tag(s.bar))

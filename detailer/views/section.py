@@ -13,36 +13,18 @@ from typing import Any
 from detailer.cage.bar import Bar, Cage
 from detailer.cage.cut import CutBar, Slice, cut
 from detailer.cage.measure import outer_box
-from detailer.drawing.primitives import XY, Align, Dimension, Disc, Path, Pen, Primitive
+from detailer.drawing.primitives import XY, Align, Disc, Path, Pen, Primitive
 from detailer.values import Face, Role
 from detailer.views.kit import TEXT, Kit, call_out
+from detailer.views.sizes import FAR, WING, Web, beside, size_items, web_of
 from detailer.views.trace import section_trace
 from detailer.views.zones import legs_of, link_size
 
 LEVEL = 6.0
 """Bars whose centres agree in height within this are one row. [mm]"""
 
-WING = 5.0
-"""So much of a slab is shown beside the web. [mm on paper]"""
-
 SHELF = 4.2
 """Least distance of two call-outs above each other. [mm on paper]"""
-
-EXTENSION = 2.0
-"""Length of an extension line that does not reach the concrete. [mm on paper]"""
-
-FAR = 4.5
-"""From the concrete to a call-out. [mm on paper]"""
-
-
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Web:
-    """The web of a slice in the picture's axes. [mm]"""
-
-    x0: float
-    x1: float
-    z0: float
-    z1: float
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -60,7 +42,7 @@ class Group:
 
 
 def section_items(
-    cage: Cage, x: float, scale: float, *, cover: bool = False
+    cage: Cage, x: float, scale: float, *, full: bool = False
 ) -> tuple[Primitive, ...]:
     """Return a section with its call-outs and dimensions.
 
@@ -72,8 +54,8 @@ def section_items(
         Where it is cut. [mm]
     scale : float
         Of the section.
-    cover : bool
-        Whether the cover is dimensioned here; once on a drawing is enough.
+    full : bool
+        Whether cover and slab are dimensioned here; once on a drawing is enough.
     """
     kit = Kit(cage.member, scale)
     seen = cut(cage, x)
@@ -85,25 +67,8 @@ def section_items(
         *_spacers(cage, seen, kit),
         *_discs(seen, kit),
         *_call_outs(cage, seen, web, kit),
-        *_dimensions(seen, web, kit, _words_left(cage, seen, kit)),
-        *(_cover(seen, web, kit) if cover else ()),
+        *size_items(seen, web, kit, _words_left(cage, seen, kit), full=full),
     )
-
-
-def web_of(cage: Cage, x: float) -> Web:
-    """Return the web at a plane, in the picture's axes.
-
-    Parameters
-    ----------
-    cage : Cage
-        The cage.
-    x : float
-        The plane. [mm]
-    """
-    webs = [p for p in cage.prisms if p.name.endswith(" web") and p.x0 <= x <= p.x1]
-    ys = [y for p in webs for y, _ in p.outline]
-    zs = [z for p in webs for _, z in p.outline]
-    return Web(x0=-max(ys), x1=-min(ys), z0=min(zs), z1=max(zs))
 
 
 def _concrete(outline: Any, web: Web, kit: Kit) -> Iterator[Path]:
@@ -298,7 +263,7 @@ def _shelves(
     """Yield the call-outs at the right, then links and spacers at the left."""
     wishes = sorted(shelves, key=lambda s: -(s[1] + s[2]))
     levels = _spread(tuple(level + step for _, level, step in wishes), kit.mm(SHELF), web)
-    edge = web.x1 + kit.mm(_beside(seen, web, 1))
+    edge = web.x1 + kit.mm(beside(seen, web, 1))
     for (group, level, step), at in zip(wishes, levels, strict=True):
         tag = kit.tag(group.bars[0].bar)
         yield kit.text((edge, at - kit.mm(TEXT / 2)), group.text, align=Align.LEFT, tag=tag)
@@ -312,13 +277,6 @@ def _shelves(
             bend = (web.x1 + kit.mm(1.2), level + step)
             yield from kit.leader(start, bend, knee, (x, z), tag=tag)
     yield from _left_side(cage, seen, web, kit)
-
-
-def _beside(seen: Slice, web: Web, side: int) -> float:
-    """Return how far from the web call-outs stand: beyond the slab, if there is one."""
-    y0, _, y1, _ = seen.outline.bounds
-    slab = -y0 > web.x1 + 1.0 if side > 0 else -y1 < web.x0 - 1.0
-    return WING + 2.0 if slab else FAR
 
 
 def _spread(levels: tuple[float, ...], step: float, web: Web) -> tuple[float, ...]:
@@ -335,7 +293,7 @@ def _spread(levels: tuple[float, ...], step: float, web: Web) -> tuple[float, ..
 
 def _left_side(cage: Cage, seen: Slice, web: Web, kit: Kit) -> Iterator[Primitive]:
     """Yield the call-outs of links and spacers at the left of the web."""
-    edge = web.x0 - kit.mm(_beside(seen, web, -1))
+    edge = web.x0 - kit.mm(beside(seen, web, -1))
     named = _named_left(cage, seen, kit)
     levels = _spread(tuple(n[0] for n in named), kit.mm(SHELF), web)
     for (z, x, text, bar), at in zip(named, levels, strict=True):
@@ -373,22 +331,3 @@ def _named_left(cage: Cage, seen: Slice, kit: Kit) -> list[tuple[float, float, s
         ends = sorted((-(y + dy), -(bar.corners[0][1] + dy)))
         named.append((z + dz, ends[0], f"T{bar.dia:.0f}-{bar.name}", bar))
     return sorted(named, key=lambda n: -n[0])
-
-
-def _dimensions(seen: Slice, web: Web, kit: Kit, words: float) -> Iterator[Primitive]:
-    """Yield width, and depth outside the words at the left."""
-    bottom = web.z0 - kit.mm(FAR + TEXT + 5.0)
-    left = web.x0 - kit.mm(_beside(seen, web, -1) + 2.0) - words
-    short = bottom + kit.mm(EXTENSION)
-    yield Dimension(start=(web.x0, short), end=(web.x1, short), line=bottom)
-    yield Dimension(start=(web.x0, web.z0), end=(web.x0, web.z1), line=left, vertical=True)
-
-
-def _cover(seen: Slice, web: Web, kit: Kit) -> Iterator[Dimension]:
-    """Yield the cover to the links, below the width."""
-    bottom = web.z0 - kit.mm(FAR + TEXT + 5.0)
-    edges = [-(outer_box(bar).y0 + bar.placings[k][1]) for bar, k in seen.links]
-    if edges:
-        line = bottom - kit.mm(6.0)
-        start, end = (max(edges), line + kit.mm(EXTENSION)), (web.x1, line + kit.mm(EXTENSION))
-        yield Dimension(start=start, end=end, line=line, text="<> cover")

@@ -12,7 +12,7 @@ from detailer.findings import Finding
 from detailer.model import Assumption, Beam, Project
 from detailer.schedule.rows import Row as ScheduleRow
 from detailer.statics import Envelope
-from detailer.values import Face
+from detailer.values import Face, Role
 from detailer.views.bent import bent_items
 from detailer.views.chains import elevation_items
 from detailer.views.cuts import Cut, cuts_of
@@ -26,6 +26,7 @@ from detailer.views.pack import GAP, Room, Row, pack, set_rows
 from detailer.views.paper import PAPERS, Paper, space_of, title_room
 from detailer.views.pulled import pulled_items
 from detailer.views.section import section_items
+from detailer.views.sizes import web_of
 from detailer.views.table import Table, table_items, table_of
 from detailer.views.viewing import make_view
 
@@ -146,19 +147,24 @@ def _stack(content: Content, scale: float) -> Iterator[View]:
     cage = content.cage
     stage = stage_of(cage, scale, content.cuts)
     text = f"1:{scale:.0f}"
+    middle = (stage.x0 + stage.x1) / 2
     top = pulled_items(stage, (Face.TOP,))
     if top:
-        yield make_view(f"{cage.member} top bars", f"Top bars {text}", scale, top)
+        name, title = f"{cage.member} top bars", f"Top bars {text}"
+        yield make_view(name, title, scale, top, middle=middle)
     items = (*picture(stage), *elevation_items(stage, content.beam))
-    yield make_view(f"{cage.member} elevation", f"Elevation of {cage.member} {text}", scale, items)
+    name, title = f"{cage.member} elevation", f"Elevation of {cage.member} {text}"
+    yield make_view(name, title, scale, items, middle=middle)
     low = pulled_items(stage, LOWER)
     if low:
         sides = any(s.bar.face in LOWER[1:] for s in stage.strands)
         words = "Bottom and side bars" if sides else "Bottom bars"
-        yield make_view(f"{cage.member} bottom bars", f"{words} {text}", scale, low)
+        name, title = f"{cage.member} bottom bars", f"{words} {text}"
+        yield make_view(name, title, scale, low, middle=middle)
     if content.curves is not None:
         moments = diagram_items(stage, content.curves)
-        yield make_view(f"{cage.member} moments", "Moments, kN·m", scale, moments)
+        name = f"{cage.member} moments"
+        yield make_view(name, "Moments, kN·m", scale, moments, middle=middle)
 
 
 def _sections(content: Content, scale: float) -> Iterator[View]:
@@ -168,11 +174,15 @@ def _sections(content: Content, scale: float) -> Iterator[View]:
         firsts.setdefault(cut.letter, cut)
     for letter in sorted(firsts, key=lambda n: (len(n), n)):
         name, title = f"{letter}-{letter}", f"{letter}-{letter} 1:{scale:.0f}"
-        items = section_items(cage, firsts[letter].x, scale, cover=letter == content.cuts[0].letter)
-        yield make_view(f"{cage.member} {name}", title, scale, items)
+        x = firsts[letter].x
+        items = section_items(cage, x, scale, full=letter == content.cuts[0].letter)
+        web = web_of(cage, x)
+        middle = (web.x0 + web.x1) / 2
+        yield make_view(f"{cage.member} {name}", title, scale, items, middle=middle)
     bent = bent_items(cage, scale)
     if bent:
-        title = f"Links and spacers 1:{scale:.0f}"
+        spaced = any(bar.role is Role.SPACER for bar in cage.bars)
+        title = f"{'Links and spacers' if spaced else 'Links'} 1:{scale:.0f}"
         yield make_view(f"{cage.member} links", title, scale, bent)
 
 
@@ -296,9 +306,7 @@ def _blocks(
     """Return sections, schedule and notes where they have a place beside what is fixed."""
     views = content.sections(scale)
     member = content.beam.mark
-    for parts in range(1, MOST_GROUPS + 1):
-        size = -(-len(views) // parts)
-        groups = [views[i : i + size] for i in range(0, len(views), size)]
+    for groups in _groupings(views):
         rows = [_row_choices(group, space) for group in groups]
         choices = (
             (content.table.size,),
@@ -320,6 +328,17 @@ def _blocks(
         )
         return tuple(placed), items
     return None
+
+
+def _groupings(views: tuple[View, ...]) -> Iterator[list[tuple[View, ...]]]:
+    """Yield sections in one group, in two of any sizes, in more of equal ones."""
+    count = len(views)
+    yield [views]
+    halves = sorted(range(1, count), key=lambda k: (abs(2 * k - count), -k))
+    yield from ([views[:k], views[k:]] for k in halves)
+    for parts in range(3, MOST_GROUPS + 1):
+        size = -(-count // parts)
+        yield [views[i : i + size] for i in range(0, count, size)]
 
 
 def _row_choices(views: tuple[View, ...], space: Room) -> list[Row]:

@@ -80,7 +80,7 @@ def table_of(cage: Cage, rows: tuple[Row, ...]) -> Table:
     bars = tuple(firsts.get(row.mark, firsts.get(row.mark.removesuffix("M"))) for row in mine)
     if any(bar is None for bar in bars):
         raise ValueError(f"schedule of {cage.member} has a mark that its cage has not")
-    mass = sum(row.mass for row in mine)
+    mass, built = sum(row.mass for row in mine), cage.copies + cage.mirrored
     return Table(
         title=f"Schedule of {cage.member}",
         columns=(
@@ -101,7 +101,7 @@ def table_of(cage: Cage, rows: tuple[Row, ...]) -> Table:
         ),
         marks=tuple(row.mark for row in mine),
         bars=tuple(bar for bar in bars if bar is not None),
-        footer=f"total {mass:.1f} kg in {cage.copies + cage.mirrored} members",
+        footer=f"total {mass:.1f} kg in {built} member{'s' if built > 1 else ''}",
     )
 
 

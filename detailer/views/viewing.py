@@ -31,7 +31,14 @@ BELOW_LINE = 0.3
 SHARE = {Align.LEFT: 0.0, Align.CENTRE: 0.5, Align.RIGHT: 1.0}
 
 
-def make_view(name: str, title: str, scale: float, items: Iterable[Primitive]) -> View:
+def make_view(
+    name: str,
+    title: str,
+    scale: float,
+    items: Iterable[Primitive],
+    *,
+    middle: float | None = None,
+) -> View:
     """Return a view of primitives, its title set beneath them.
 
     Parameters
@@ -44,13 +51,15 @@ def make_view(name: str, title: str, scale: float, items: Iterable[Primitive]) -
         25 means 1:25.
     items : iterable of Primitive
         In true millimetres.
+    middle : float, optional
+        x of the title's middle; that of what is drawn if absent. [mm]
     """
     drawn = tuple(items)
     x0, y0, x1, y1 = box_of(drawn, scale)
     if title:
         base = y0 - (UNDER + TITLE) * scale
         label = Label(
-            at=((x0 + x1) / 2, base),
+            at=((x0 + x1) / 2 if middle is None else middle, base),
             text=title,
             height=TITLE,
             align=Align.CENTRE,
@@ -137,6 +146,7 @@ def _dimension(item: Dimension, scale: float) -> Iterator[XY]:
     along = 1 if item.vertical else 0
     middle = (item.start[along] + item.end[along]) / 2
     reach = max(wide, item.distance / 2 + scale)
+    lower = wide + scale > item.distance / 2
     for a in (middle - reach, middle + reach):
-        for b in (item.line - (tall if item.vertical else scale), item.line + tall):
+        for b in (item.line - (tall if item.vertical or lower else scale), item.line + tall):
             yield (b, a) if item.vertical else (a, b)

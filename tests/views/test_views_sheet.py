@@ -113,7 +113,7 @@ def test_a_sheet_says_what_it_must(made: Made) -> None:
         assert CAUTION in words
         assert "Concrete M25" in words and "Fe 500" in words
         assert "Nominal cover" in words and "1 unbuildable" in words
-        assert "21.4 for 25 mm" in words
+        assert "bars 01 are 21.4 mm apart, need 25 [IS 456:2000, 26.3.2]." in words
         for assumption in project.assumptions:
             if assumption.member in ("", drawing.name):
                 assert f"A{assumption.number}" in words
