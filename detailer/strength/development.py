@@ -94,9 +94,9 @@ def _rod(bar: Bar, placing: int) -> Rod:
     points = [(x + dx, y + dy, z + dz) for x, y, z in bar.corners]
     if points[0][0] > points[-1][0]:
         points = points[::-1]
-    left, used_left, worth_left = _end(points, bar)
-    right, used_right, worth_right = _end(points[::-1], bar)
-    body = points[used_left : len(points) - used_right]
+    body = max(range(len(points) - 1), key=lambda i: abs(points[i + 1][0] - points[i][0]))
+    left, used_left, worth_left = _end(points[: body + 2], bar)
+    right, used_right, worth_right = _end(points[body:][::-1], bar)
     outer = [p[0] for p in points]
     half = bar.dia / 2
     tips = (
@@ -115,7 +115,7 @@ def _rod(bar: Bar, placing: int) -> Rod:
         x1=right,
         worth=(worth_left, worth_right),
         tips=tips,
-        line=tuple(body),
+        line=tuple(points[used_left : len(points) - used_right]),
     )
 
 
