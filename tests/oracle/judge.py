@@ -82,12 +82,12 @@ class Line:
         return x0, x1
 
     def solve(self) -> None:
-        """Envelope by beam elements of about 25 mm, one load case a span."""
+        """Envelope by beam elements of about 80 mm, one load case a span."""
         nodes: list[float] = []
         stiff: list[float] = []
         owner: list[int] = []
         for k, span in enumerate(self.spans):
-            count = max(8, ceil((span["x1"] - span["x0"]) / 25))
+            count = max(8, ceil((span["x1"] - span["x0"]) / 80))
             xs = np.linspace(span["x0"], span["x1"], count + 1)
             nodes += list(xs[:-1])
             section = span["section"]
