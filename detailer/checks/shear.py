@@ -3,15 +3,43 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
+from dataclasses import dataclass
+
+import numpy as np
 
 from detailer.checks.case import Case
 from detailer.findings import Finding
 from detailer.model import Span
 from detailer.rules import is456
 from detailer.statics import Envelope
+from detailer.strength.shear import ShearCapacity
 from detailer.values import Face, Required, Severity
 
 SLACK = 1.002
+"""Shear counts as carried when it is greater by no more than this factor."""
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Station:
+    """What is asked of one place of a span, and what it carries."""
+
+    span: Span
+    x: float
+    shear: float  # at x itself [N]
+    critical: float  # at x, or at d from the face where x is closer [N]
+    twist: float  # [N·mm]
+    face: Face
+    carried: ShearCapacity
+
+    @property
+    def asked(self) -> float:
+        """Return the shear asked of links and concrete, torsion included. [N]"""
+        return is456.torsion_shear(self.critical, self.twist, self.span.section.width)
+
+    @property
+    def crushing(self) -> float:
+        """Return the shear asked of the web, torsion included. [N]"""
+        return is456.torsion_shear(self.shear, self.twist, self.span.section.width)
 
 
 def check(case: Case) -> Iterator[Finding]:
@@ -29,113 +57,133 @@ def check(case: Case) -> Iterator[Finding]:
     if case.envelope is None:
         return
     for span in case.beam.spans:
-        worst: tuple[float, Finding] | None = None
-        limit: tuple[float, Finding] | None = None
-        for x in case.envelope.sample(span, 50.0):
-            at = float(x)
-            ratio, finding = _carried(case, span, at, case.envelope)
-            if ratio > SLACK and (worst is None or ratio > worst[0]):
-                worst = (ratio, finding)
-            elif ratio <= SLACK and worst is not None:
-                yield worst[1]
-                worst = None
-            ratio, finding = _crushed(case, span, at, case.envelope)
-            if ratio > SLACK and (limit is None or ratio > limit[0]):
-                limit = (ratio, finding)
-        yield from (item[1] for item in (worst, limit) if item is not None)
+        along = _stations(case, span, case.envelope)
+        yield from _stretches(case, along)
+        worst = max(along, key=lambda s: s.crushing / s.carried.limit)
+        if worst.crushing > SLACK * worst.carried.limit:
+            yield _crushed(case, worst)
 
 
-def _face(envelope: Envelope, x: float) -> Face:
-    """Return the face more in tension."""
-    least, most = envelope.moment(x)
-    return Face.BOTTOM if most >= -least else Face.TOP
-
-
-def _demand(case: Case, span: Span, x: float, envelope: Envelope) -> float:
-    """Return the shear that counts at x, torsion included. [N]"""
+def _stations(case: Case, span: Span, envelope: Envelope) -> list[Station]:
+    """Return places no more than 50 mm apart."""
+    xs = envelope.sample(span, 50.0)
     x0, x1 = case.beam.clear(span)
-    d = case.steel.depth((x0 + x1) / 2, _face(envelope, x), span) or span.section.depth - 50
-    at = x
-    if span.left is not None:
-        at = max(at, min(x0 + d, (x0 + x1) / 2))
-    if span.right is not None:
-        at = min(at, max(x1 - d, (x0 + x1) / 2))
-    least, most = envelope.shear(at)
-    return is456.torsion_shear(max(-least, most), envelope.torsion(x), span.section.width)
+    middle = (x0 + x1) / 2
+    least, most = envelope.moments(xs)
+    faces = [
+        Face.BOTTOM if high >= -low else Face.TOP for low, high in zip(least, most, strict=True)
+    ]
+    d = {f: case.steel.depth(middle, f, span) or span.section.depth - 50 for f in set(faces)}
+    at = xs.copy()
+    for k, face in enumerate(faces):
+        if span.left is not None:
+            at[k] = max(at[k], min(x0 + d[face], middle))
+        if span.right is not None:
+            at[k] = min(at[k], max(x1 - d[face], middle))
+    here, there = (np.maximum(-low, high) for low, high in map(envelope.shears, (xs, at)))
+    twist = envelope.torsions(xs)
+    return [
+        Station(
+            span=span,
+            x=float(x),
+            shear=float(here[k]),
+            critical=float(there[k]),
+            twist=float(twist[k]),
+            face=faces[k],
+            carried=case.shear.capacity(float(x), span, faces[k]),
+        )
+        for k, x in enumerate(xs)
+    ]
 
 
-def _carried(case: Case, span: Span, x: float, envelope: Envelope) -> tuple[float, Finding]:
-    asked = _demand(case, span, x, envelope)
-    capacity = case.shear.capacity(x, span, _face(envelope, x))
-    twist = envelope.torsion(x)
-    if twist > 0 and asked > capacity.concrete:
-        need = _torsion_links(case, span, x, envelope, asked - capacity.concrete, capacity.spacing)
-        found, required, unit = capacity.asv, need.value, "mm2"
-        rule, clause = "torsion-links", need.clause
-        said = f"links of {found:.0f} mm² at {capacity.spacing:.0f} mm, {required:.0f} needed"
+def _stretches(case: Case, along: list[Station]) -> Iterator[Finding]:
+    """Yield the worst station of each run of stations that lack strength."""
+    worst: tuple[float, Finding] | None = None
+    for station in along:
+        ratio, finding = _carried(case, station)
+        if finding is None:
+            if worst is not None:
+                yield worst[1]
+            worst = None
+        elif worst is None or ratio > worst[0]:
+            worst = ratio, finding
+    if worst is not None:
+        yield worst[1]
+
+
+def _carried(case: Case, at: Station) -> tuple[float, Finding | None]:
+    """Return asked over carried, and the finding where that is too much."""
+    carried = at.carried
+    if at.twist > 0 and at.asked > carried.concrete:
+        need = _torsion_links(case, at)
+        found, required, unit, rule, clause = (
+            carried.asv,
+            need.value,
+            "mm2",
+            "torsion-links",
+            need.clause,
+        )
+        said = f"links of {found:.0f} mm² at {carried.spacing:.0f} mm, {required:.0f} needed"
     else:
-        found, required, unit = capacity.total / 1e3, asked / 1e3, "kN"
+        found, required, unit = carried.total / 1e3, at.asked / 1e3, "kN"
         rule, clause = "shear", "IS 456:2000, 40.4"
         said = (
-            f"links at {capacity.spacing:.0f} mm and concrete carry {found:.0f} kN, "
+            f"links at {carried.spacing:.0f} mm and concrete carry {found:.0f} kN, "
             f"{required:.0f} needed"
         )
-    place = case.place(x)
-    marks = sorted({m for s in case.shear.sets if abs(s.x - x) < 400 for m in s.marks})
-    return required / max(found, 1e-9), Finding(
+    ratio = required / max(found, 1e-9)
+    if ratio <= SLACK:
+        return ratio, None
+    place = case.place(at.x)
+    marks = sorted({m for s in case.shear.sets if abs(s.x - at.x) < 400 for m in s.marks})
+    return ratio, Finding(
         rule=rule,
         severity=Severity.UNSAFE,
         member=case.beam.mark,
         place=place,
-        x=x,
+        x=at.x,
         bars=tuple(marks),
         found=round(found, 1),
         required=round(required, 1),
         unit=unit,
         clause=clause,
-        message=f"{place.name}: at {x:.0f} {said}",
+        message=f"{place.name}: at {at.x:.0f} {said}",
         remedy="Set the links closer or lengthen their zone",
     )
 
 
-def _torsion_links(
-    case: Case, span: Span, x: float, envelope: Envelope, excess: float, spacing: float
-) -> Required:
+def _torsion_links(case: Case, at: Station) -> Required:
     """Return the area two legs need for torsion and shear together."""
-    d = case.steel.depth(x, _face(envelope, x), span) or span.section.depth - 50
-    corner = max((bar.dia for bar in case.steel.bars if bar.covers(x)), default=16.0)
-    cover, link = case.beam.cover, max(s.dia for s in case.shear.sets)
-    b1 = span.section.width - cover.left - cover.right - 2 * link - corner
-    d1 = span.section.depth - cover.top - cover.bottom - 2 * link - corner
-    least, most = envelope.shear(x)
+    section = at.span.section
+    d = case.steel.depth(at.x, at.face, at.span) or section.depth - 50
+    corner = max((bar.dia for bar in case.steel.bars if bar.covers(at.x)), default=16.0)
+    cover, link = case.beam.cover, max((s.dia for s in case.shear.sets), default=8.0)
     return is456.torsion_link_area(
-        envelope.torsion(x),
-        max(-least, most),
-        spacing,
-        b1,
-        d1,
+        at.twist,
+        at.shear,
+        at.carried.spacing,
+        section.width - cover.left - cover.right - 2 * link - corner,
+        section.depth - cover.top - cover.bottom - 2 * link - corner,
         case.project.steel.links.fy,
-        floor=excess / d,
+        floor=(at.asked - at.carried.concrete) / d,
     )
 
 
-def _crushed(case: Case, span: Span, x: float, envelope: Envelope) -> tuple[float, Finding]:
-    least, most = envelope.shear(x)
-    asked = is456.torsion_shear(max(-least, most), envelope.torsion(x), span.section.width)
-    capacity = case.shear.capacity(x, span, _face(envelope, x))
-    place = case.place(x)
-    return asked / capacity.limit, Finding(
+def _crushed(case: Case, at: Station) -> Finding:
+    """Return the finding of a web that no links can help."""
+    place = case.place(at.x)
+    return Finding(
         rule="shear-limit",
         severity=Severity.UNSAFE,
         member=case.beam.mark,
         place=place,
-        x=x,
+        x=at.x,
         bars=(),
-        found=round(asked / 1e3, 1),
-        required=round(capacity.limit / 1e3, 1),
+        found=round(at.crushing / 1e3, 1),
+        required=round(at.carried.limit / 1e3, 1),
         unit="kN",
         clause="IS 456:2000, 40.2.3",
-        message=f"{place.name}: shear {asked / 1e3:.0f} kN exceeds what any links allow, "
-        f"{capacity.limit / 1e3:.0f}",
+        message=f"{place.name}: shear {at.crushing / 1e3:.0f} kN exceeds what any links allow, "
+        f"{at.carried.limit / 1e3:.0f}",
         remedy="Enlarge the section or raise the grade of concrete",
     )

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from bisect import bisect_right
+from bisect import bisect_left, bisect_right
 from dataclasses import dataclass
 
 from detailer.cage.bar import Bar, Cage
@@ -10,7 +10,7 @@ from detailer.model import Span
 from detailer.rules import is456
 from detailer.strength.development import Rod
 from detailer.strength.slices import Steel, area
-from detailer.values import Face, Role
+from detailer.values import ContactKind, Face, Role
 
 SET = 40.0
 """Links of one set stand no further apart than this along the member. [mm]"""
@@ -54,6 +54,7 @@ def link_sets(cage: Cage) -> tuple[LinkSet, ...]:
     cage : Cage
         The placed steel.
     """
+    widest = _widest(cage)
     placed = sorted(
         (
             (_middle(bar) + shift[0], bar.id, bar)
@@ -65,7 +66,7 @@ def link_sets(cage: Cage) -> tuple[LinkSet, ...]:
     )
     groups: list[list[tuple[float, Bar]]] = []
     for x, _, bar in placed:
-        outer = bar.role is Role.LINK and _width(bar) >= _widest(cage) - 1
+        outer = bar.role is Role.LINK and _width(bar) >= widest - 1
         if groups and not outer and x - groups[-1][0][0] < SET:
             groups[-1].append((x, bar))
         else:
@@ -105,6 +106,7 @@ class Shear:
 
     steel: Steel
     sets: tuple[LinkSet, ...]
+    held: dict[tuple[str, int], tuple[bool, bool]]  # ends in a support, a lap or at a free end
 
     def around(self, x: float, span: Span) -> tuple[float, float]:
         """Return area and spacing of the links around x within a span. [mm², mm]
@@ -117,13 +119,12 @@ class Shear:
             Its span.
         """
         x0, x1 = self.steel.beam.clear(span)
-        mine = [s for s in self.sets if x0 - 1 <= s.x <= x1 + 1]
-        if not mine:
-            return 0.0, float("inf")
-        if len(mine) == 1:
-            return mine[0].asv, x1 - x0
-        k = min(max(bisect_right([s.x for s in mine], x), 1), len(mine) - 1)
-        a, b = mine[k - 1], mine[k]
+        xs = [s.x for s in self.sets]
+        first, last = bisect_left(xs, x0 - 1), bisect_right(xs, x1 + 1)
+        if last - first < 2:
+            return (self.sets[first].asv, x1 - x0) if last > first else (0.0, float("inf"))
+        k = min(max(bisect_right(xs, x), first + 1), last - 1)
+        a, b = self.sets[k - 1], self.sets[k]
         return min(a.asv, b.asv), b.x - a.x
 
     def counted(self, x: float, face: Face, d: float) -> tuple[Rod, ...]:
@@ -142,29 +143,12 @@ class Shear:
         ----------
         .. [1] IS 456:2000, note to Table 19.
         """
-        return tuple(
-            bar
-            for bar in self.steel.at(x, face)
-            if (bar.tips[0] <= x - d or self._held(bar.tips[0]))
-            and (bar.tips[1] >= x + d or self._held(bar.tips[1]))
-        )
-
-    def _held(self, end: float) -> bool:
-        """Return whether a bar's end lies in a support or at a free end."""
-        beam = self.steel.beam
-        if any(s.left - 1 <= end <= s.right + 1 for s in beam.supports):
-            return True
-        if any(
-            b.tips[0] + 50 < end < b.tips[1] - 50 and self._lapped(b, end) for b in self.steel.bars
-        ):
-            return True
-        return end < beam.start + 100 or end > beam.end - 100
-
-    def _lapped(self, other: Rod, end: float) -> bool:
-        return any(
-            c.kind.value == "lap" and other.id in (c.a, c.b) and c.x0 - 1 <= end <= c.x1 + 1
-            for c in self.steel.cage.contacts
-        )
+        found = []
+        for bar in self.steel.at(x, face):
+            left, right = self.held[bar.id, bar.placing]
+            if (left or bar.tips[0] <= x - d) and (right or bar.tips[1] >= x + d):
+                found.append(bar)
+        return tuple(found)
 
     def capacity(self, x: float, span: Span, face: Face) -> ShearCapacity:
         """Return what the section at x carries in shear.
@@ -204,4 +188,20 @@ def shear_of(steel: Steel) -> Shear:
     steel : Steel
         The placed steel.
     """
-    return Shear(steel, link_sets(steel.cage))
+    held = {
+        (bar.id, bar.placing): (_held(steel, bar, 0), _held(steel, bar, 1)) for bar in steel.bars
+    }
+    return Shear(steel, link_sets(steel.cage), held)
+
+
+def _held(steel: Steel, bar: Rod, side: int) -> bool:
+    """Return whether a bar's end lies in a support, in a lap or at a free end."""
+    beam, end = steel.beam, bar.tips[side]
+    if any(s.left - 1 <= end <= s.right + 1 for s in beam.supports):
+        return True
+    if end < beam.start + 100 or end > beam.end - 100:
+        return True
+    return any(
+        c.kind is ContactKind.LAP and bar.id in (c.a, c.b) and c.x0 - 1 <= end <= c.x1 + 1
+        for c in steel.cage.contacts
+    )
