@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from itertools import pairwise
 from math import hypot
 
 import numpy as np
@@ -45,11 +46,14 @@ class Rod:
         x : float
             Along the member. [mm]
         """
-        if len(self.line) == 2:
-            return self.line[0][1], self.line[0][2]
-        xs = [p[0] for p in self.line]
-        y = np.interp(x, xs, [p[1] for p in self.line])
-        return float(y), float(np.interp(x, xs, [p[2] for p in self.line]))
+        line = self.line
+        if len(line) == 2 or x <= line[0][0]:
+            return line[0][1], line[0][2]
+        for (xa, ya, za), (xb, yb, zb) in pairwise(line):
+            if x < xb:
+                share = (x - xa) / (xb - xa)
+                return ya + share * (yb - ya), za + share * (zb - za)
+        return line[-1][1], line[-1][2]
 
     def covers(self, x: float) -> bool:
         """Return whether the steel is there at x.
