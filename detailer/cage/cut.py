@@ -95,11 +95,19 @@ def bars_at(cage: Cage, x: float) -> tuple[CutBar, ...]:
     for bar in cage.bars:
         if bar.role in (Role.LINK, Role.TIE):
             continue
-        line = centre_line(bar)
+        low, high = _reach(bar.corners)
         for k, (dx, dy, dz) in enumerate(bar.placings):
-            for y, z, along in line.at_x(x - dx):
+            if not low <= x - dx <= high:
+                continue
+            for y, z, along in centre_line(bar).at_x(x - dx):
                 found.append(CutBar(bar, k, y + dy, z + dz, along))
     return tuple(sorted(found, key=lambda c: (round(c.z, 3), round(c.y, 3), c.bar.id, c.placing)))
+
+
+def _reach(corners: tuple[Point, ...]) -> tuple[float, float]:
+    """Return between which planes x a centre line lies, a hair more. [mm]"""
+    xs = [corner[0] for corner in corners]
+    return min(xs) - 1e-6, max(xs) + 1e-6
 
 
 def links_at(cage: Cage, x: float) -> tuple[tuple[Bar, int], ...]:

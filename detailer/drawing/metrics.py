@@ -7,7 +7,7 @@ the characters that have them. It is read from the font's own tables, never from
 from __future__ import annotations
 
 import json
-from functools import cache
+from functools import cache, lru_cache
 from importlib.resources import files
 from types import MappingProxyType
 from typing import NamedTuple
@@ -31,6 +31,7 @@ def _face(name: str) -> Face:
     return Face(MappingProxyType(steps), max(steps.values()))
 
 
+@lru_cache(maxsize=4096)
 def width(text: str, height: float, *, bold: bool = False) -> float:
     """Return the width of a text; a character the table lacks counts as the widest.
 

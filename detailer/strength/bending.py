@@ -9,6 +9,9 @@ from typing import NamedTuple
 from detailer.rules import is456
 from detailer.strength.section import Gross
 
+CLOSE = 1e-10
+"""Forces that differ by this share are in balance."""
+
 
 class Row(NamedTuple):
     """Steel at one level: z, and the stress it may develop there."""
@@ -108,14 +111,24 @@ def _compressed(xu: float, at: float, fy: float, limit: float) -> float:
 
 
 def _balance(force: Callable[[float], float], pull: float, high: float) -> float:
-    """Return the depth at which a growing force reaches the pull, by bisection."""
-    low = 0.0
-    for _ in range(48):
-        middle = (low + high) / 2
-        if force(middle) < pull:
-            low = middle
+    """Return the depth at which a growing force reaches the pull, by false position."""
+    low, below, above = 0.0, 0.0, force(high)
+    side = 0
+    for _ in range(80):
+        middle = low + (pull - below) * (high - low) / (above - below)
+        here = force(middle)
+        if abs(here - pull) <= CLOSE * pull:
+            return middle
+        if here < pull:
+            low, below = middle, here
+            if side < 0:
+                above = pull + (above - pull) / 2
+            side = -1
         else:
-            high = middle
+            high, above = middle, here
+            if side > 0:
+                below = pull + (below - pull) / 2
+            side = 1
     return high
 
 

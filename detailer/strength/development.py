@@ -55,6 +55,16 @@ class Rod:
                 return ya + share * (yb - ya), za + share * (zb - za)
         return line[-1][1], line[-1][2]
 
+    def levels(self, xs: Floats) -> Floats:
+        """Return z of the body at places. [mm]
+
+        Parameters
+        ----------
+        xs : ndarray
+            Along the member. [mm]
+        """
+        return np.interp(xs, [p[0] for p in self.line], [p[2] for p in self.line])
+
     def covers(self, x: float) -> bool:
         """Return whether the steel is there at x.
 

@@ -101,23 +101,19 @@ class Steel:
             table = np.array([(xs >= b.tips[0]) & (xs <= b.tips[1]) for b in bars], dtype=float)
         else:
             table = shares(self.project, self.cage, bars, xs)
-        table = table.reshape(len(bars), len(xs))
-        seen: dict[tuple[object, ...], Resistance] = {}
+        stress = np.round(table.reshape(len(bars), len(xs)).T * (0.87 * steel.fy), 1)
+        level = np.round(np.array([b.levels(xs) for b in bars]).reshape(len(bars), len(xs)).T, 2)
+        seen: dict[tuple[int, bytes, bytes], Resistance] = {}
         result = []
-        for k, x in enumerate(xs):
-            number = (span or self.beam.span_at(float(x))).number
-            rows = tuple(
-                Row(
-                    b.dia,
-                    area(b.dia),
-                    round(b.at(float(x))[1], 2),
-                    round(float(table[i, k]) * 0.87 * steel.fy, 1),
-                )
-                for i, b in enumerate(bars)
-                if table[i, k] > 0
-            )
-            key = (number, rows)
+        for k, x in enumerate(xs.tolist()):
+            number = (span or self.beam.span_at(x)).number
+            key = (number, stress[k].tobytes(), level[k].tobytes())
             if key not in seen:
+                rows = tuple(
+                    Row(b.dia, area(b.dia), z, s)
+                    for b, z, s in zip(bars, level[k].tolist(), stress[k].tolist(), strict=True)
+                    if s > 0
+                )
                 seen[key] = resistance(
                     self.shapes[number], rows, concrete.fck, steel.fy, sagging=sagging
                 )

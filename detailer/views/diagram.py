@@ -5,6 +5,7 @@ Sagging is drawn below the axis and hogging above, on the side where the steel i
 
 from __future__ import annotations
 
+from bisect import bisect_left
 from collections.abc import Iterator
 from dataclasses import dataclass
 from itertools import pairwise
@@ -104,7 +105,7 @@ def value_at(xs: tuple[float, ...], values: tuple[float, ...], x: float) -> floa
     Parameters
     ----------
     xs : tuple of float
-        Places. [mm]
+        Places, ascending. [mm]
     values : tuple of float
         Values at them.
     x : float
@@ -112,7 +113,9 @@ def value_at(xs: tuple[float, ...], values: tuple[float, ...], x: float) -> floa
     """
     if not xs:
         return 0.0
-    return min(zip(xs, values, strict=True), key=lambda p: abs(p[0] - x))[1]
+    at = bisect_left(xs, x)
+    near = range(max(at - 1, 0), min(at + 1, len(xs)))
+    return values[min(near, key=lambda i: abs(xs[i] - x))]
 
 
 def _cut_offs(stage: Stage, curves: Curves, scale: _Scale) -> Iterator[Path]:

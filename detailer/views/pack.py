@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from itertools import permutations
 
 from detailer.drawing.primitives import XY
 
@@ -31,6 +30,16 @@ class Room:
             and other.x0 < self.x1 - 1e-6
             and self.y0 < other.y1 - 1e-6
             and other.y0 < self.y1 - 1e-6
+        )
+
+    def within(self, other: Room) -> bool:
+        """Return whether this rectangle is a part of another one."""
+        return (
+            other.x0 <= self.x0
+            and other.y0 <= self.y0
+            and self.x1 <= other.x1
+            and self.y1 <= other.y1
+            and self is not other
         )
 
     def without(self, taken: Room) -> tuple[Room, ...]:
@@ -107,26 +116,38 @@ def pack(
     choices : tuple of tuple of (float, float)
         The sizes each block may have, the preferred one first.
     """
-    for order in permutations(range(len(choices))):
-        free = [space]
-        for taken in fixed:
-            free = _left(free, taken)
-        found: dict[int, tuple[int, XY]] = {}
-        for block in order:
-            place = _first(free, choices[block])
-            if place is None:
-                break
-            size = choices[block][place[0]]
-            x, y = place[1]
-            found[block] = place
-            free = _left(free, Room(x - GAP, y - size[1] - GAP, x + size[0] + GAP, y + GAP))
-        else:
-            return tuple(found[i] for i in range(len(choices)))
+    free = [space]
+    for taken in fixed:
+        free = _left(free, taken)
+    if any(_first(free, sizes) is None for sizes in choices):
+        return None
+    found = _rest(free, choices, tuple(range(len(choices))))
+    return None if found is None else tuple(found[i] for i in range(len(choices)))
+
+
+def _rest(
+    free: list[Room], choices: tuple[tuple[XY, ...], ...], blocks: tuple[int, ...]
+) -> dict[int, tuple[int, XY]] | None:
+    """Return places of blocks in what is free, the first order of them that fits."""
+    if not blocks:
+        return {}
+    for block in blocks:
+        place = _first(free, choices[block])
+        if place is None:
+            return None  # what does not fit now fits no better later
+        size = choices[block][place[0]]
+        x, y = place[1]
+        taken = Room(x - GAP, y - size[1] - GAP, x + size[0] + GAP, y + GAP)
+        rest = _rest(_left(free, taken), choices, tuple(b for b in blocks if b != block))
+        if rest is not None:
+            return {block: place, **rest}
     return None
 
 
 def _left(free: list[Room], taken: Room) -> list[Room]:
-    return [rest for room in free for rest in room.without(taken)]
+    """Return the largest rectangles left, none within another."""
+    rest = dict.fromkeys(part for room in free for part in room.without(taken))
+    return [room for room in rest if not any(room.within(other) for other in rest)]
 
 
 def _first(free: list[Room], sizes: tuple[XY, ...]) -> tuple[int, XY] | None:

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from dataclasses import dataclass, replace
-from functools import cached_property
+from functools import cached_property, lru_cache
 
 from detailer.cage.bar import Cage
 from detailer.drawing.primitives import XY, Drawing, Placed, Primitive, Sheet, View
@@ -66,6 +66,16 @@ class Content:
     def texts(self) -> tuple[Text, ...]:
         """Return the notes set in each of the widths they may have."""
         return tuple(set_notes(self.notes, width) for width in NOTE_WIDTHS)
+
+    @cached_property
+    def table_size(self) -> XY:
+        """Return width and height of the schedule. [mm on paper]"""
+        return self.table.size
+
+    @cached_property
+    def note_sizes(self) -> tuple[XY, ...]:
+        """Return the sizes the notes may have. [mm on paper]"""
+        return tuple((w, t.height) for w, t in zip(NOTE_WIDTHS, self.texts, strict=True))
 
     @cached_property
     def _made(self) -> dict[tuple[str, float], tuple[View, ...]]:
@@ -233,6 +243,10 @@ def _composed(
     if wide > space.x1 - space.x0 or tall > space.y1 - space.y0:
         return None
     taken = Room(space.x0, space.y1 - tall, space.x0 + wide + GAP, space.y1)
+    room = (space.x1 - space.x0) * (space.y1 - space.y0)
+    areas = (w * h for w, h in map(size_of, content.sections(scale)))
+    if wide * tall + sum(areas) + _others(content, paper) > room:
+        return None
     placed = _blocks(content, space, (taken, title_room(paper)), scale)
     if placed is None:
         return None
@@ -260,25 +274,20 @@ def _hopeful(content: Content, paper: Paper, scale: float) -> bool:
     sections = len({cut.letter for cut in content.cuts})
     across = max(y for p in beams if p.name.endswith(" web") for y, _ in p.outline) * 2
     one = (across / scale + BESIDE[0]) * ((high - low) / scale + BESIDE[1])
-    table, notes = content.table.size, min(w * t.height for w, t in _notes(content))
-    title = title_room(paper)
-    need = (
-        wide * (LEAST_STACK + (high - low) / paper.scale)
-        + sections * one
-        + table[0] * table[1]
-        + notes
-        + (title.x1 - title.x0) * (title.y1 - title.y0)
-    )
+    need = wide * (LEAST_STACK + (high - low) / paper.scale) + sections * one
     room = space.x1 - space.x0, space.y1 - space.y0
-    return wide <= room[0] and need <= room[0] * room[1]
+    return wide <= room[0] and need + _others(content, paper) <= room[0] * room[1]
+
+
+def _others(content: Content, paper: Paper) -> float:
+    """Return the least area that schedule, notes and title block need. [mm² on paper]"""
+    table, title = content.table_size, title_room(paper)
+    notes = min(w * h for w, h in content.note_sizes)
+    return table[0] * table[1] + notes + (title.x1 - title.x0) * (title.y1 - title.y0)
 
 
 def _scales(views: tuple[Placed, ...]) -> str:
     return ", ".join(f"1:{scale:.0f}" for scale in sorted({p.view.scale for p in views}))
-
-
-def _notes(content: Content) -> Iterator[tuple[float, Text]]:
-    yield from zip(NOTE_WIDTHS, content.texts, strict=True)
 
 
 def _aligned(stack: tuple[View, ...], space: Room, x0: float, scale: float) -> Iterator[Placed]:
@@ -309,8 +318,8 @@ def _blocks(
     for groups in _groupings(views):
         rows = [_row_choices(group, space) for group in groups]
         choices = (
-            (content.table.size,),
-            tuple((w, t.height) for w, t in _notes(content)),
+            (content.table_size,),
+            content.note_sizes,
             *(tuple(row.size for row in row_choices) for row_choices in rows),
         )
         found = pack(space, fixed, choices)
@@ -341,16 +350,20 @@ def _groupings(views: tuple[View, ...]) -> Iterator[list[tuple[View, ...]]]:
         yield [views[i : i + size] for i in range(0, count, size)]
 
 
-def _row_choices(views: tuple[View, ...], space: Room) -> list[Row]:
+def _row_choices(views: tuple[View, ...], space: Room) -> tuple[Row, ...]:
     """Return sections in rows as long as the paper, then in shorter and shorter ones."""
-    sizes, wide = tuple(size_of(v) for v in views), space.x1 - space.x0
+    return _rows_of(tuple(size_of(v) for v in views), space.x1 - space.x0)
+
+
+@lru_cache(maxsize=256)
+def _rows_of(sizes: tuple[XY, ...], wide: float) -> tuple[Row, ...]:
     each = max(w for w, _ in sizes)
-    found: list[Row] = []
-    for count in range(len(views), 0, -1):
+    found: dict[XY, Row] = {}
+    for count in range(len(sizes), 0, -1):
         row = set_rows(sizes, min(wide, count * (each + GAP) - GAP))
-        if row is not None and row.size not in [r.size for r in found]:
-            found.append(row)
-    return found
+        if row is not None:
+            found.setdefault(row.size, row)
+    return tuple(found.values())
 
 
 def _in_rows(views: tuple[View, ...], row: Row, corner: XY) -> Iterator[Placed]:
