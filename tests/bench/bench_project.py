@@ -218,7 +218,8 @@ def report(beams: int, rounds: int, longest: int) -> list[tuple[str, float, floa
     lengths = sorted({kinds, max(kinds, longest // 10), longest})
     runs = {count: alone(count, kinds) for count in lengths}
     for count, run in runs.items():
-        print(f"{count} beams: {run['time'] / count * 1e3:.0f} ms a beam, peak {run['peak']:.0f} kB")
+        each = run["time"] / count * 1e3
+        print(f"{count} beams: {each:.0f} ms a beam, peak {run['peak']:.0f} kB")
     short, long = runs[lengths[0]], runs[lengths[-1]]
     apart = max(lengths[-1] - lengths[0], 1)
     results = {
