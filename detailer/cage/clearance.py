@@ -3,14 +3,16 @@
 from __future__ import annotations
 
 from dataclasses import dataclass, replace
+from functools import lru_cache
 
 import numpy as np
 
 from detailer.cage.bar import Bar, Cage, Contact, Point
-from detailer.cage.line import centre_line
+from detailer.cage.line import line_through
 from detailer.cage.pieces import (
     SURE,
     Array,
+    Form,
     Pieces,
     Whole,
     joined,
@@ -27,6 +29,9 @@ ROUGH = 0.01
 
 FINE = 0.001
 """A clear distance is right to this share of it, or to 0.001 mm where that is more."""
+
+USUAL = 40.0
+"""Pairs are looked for at least within this. [mm]"""
 
 MEETING = 0.05
 """Bars this close touch. [mm]"""
@@ -73,11 +78,8 @@ def gaps(cage: Cage, *, ribs: bool = False, within: float) -> tuple[Gap, ...]:
         Greatest clear distance of interest. [mm]
     """
     names = [(bar, k) for bar in cage.bars for k in range(len(bar.placings))]
-    pieces = pieces_of(tuple((bar, steel_radius(bar, ribs=ribs)) for bar in cage.bars))
-    one, two = near_pairs(pieces, within)
-    if not len(one):
-        return ()
-    key, gap, at = _least(pieces.take(one), pieces.take(two), within, len(names))
+    forms = tuple((bar.corners, bar.mandrels, bar.dia, bar.placings) for bar in cage.bars)
+    key, gap, at = _measured(forms, ribs, max(within, USUAL))
     declared = _Declared(cage)
     found = []
     for k in np.flatnonzero(gap <= within):
@@ -88,6 +90,21 @@ def gaps(cage: Cage, *, ribs: bool = False, within: float) -> tuple[Gap, ...]:
         kind = declared.kind(a, b, where[0])
         found.append(Gap(a.id, ai, b.id, bi, float(gap[k]), where, kind))
     return tuple(sorted(found, key=lambda g: (g.a, g.ai, g.b, g.bi)))
+
+
+@lru_cache(maxsize=2)
+def _measured(forms: tuple[Form, ...], ribs: bool, within: float) -> tuple[Whole, Array, Array]:
+    """Return pairs of real bars by number, their least clear distances, and where they are.
+
+    The checks of one cage ask for the same pairs again and again, so the last ones are kept.
+    """
+    radii = (over_ribs(form[2]) / 2 if ribs else form[2] / 2 for form in forms)
+    pieces = pieces_of(tuple(zip(forms, radii, strict=True)))
+    one, two = near_pairs(pieces, within)
+    if not len(one):
+        return np.zeros(0, dtype=np.intp), np.zeros(0), np.zeros((0, 3))
+    count = sum(len(form[3]) for form in forms)
+    return _least(pieces.take(one), pieces.take(two), within, count)
 
 
 def _least(a: Pieces, b: Pieces, within: float, count: int) -> tuple[Whole, Array, Array]:
@@ -153,9 +170,24 @@ def self_gap(bar: Bar) -> float:
     """
     if len(bar.corners) < 4:
         return float("inf")
-    alone = replace(bar, placings=((0.0, 0.0, 0.0),))
-    pieces = pieces_of(((alone, bar.dia / 2),))
-    third = centre_line(bar).length / 3
+    return _self_gap(_turned(bar.corners), bar.mandrels, bar.dia)
+
+
+def _turned(corners: tuple[Point, ...]) -> tuple[Point, ...]:
+    """Return corners from the first one, mirrored so that each axis is first left forwards.
+
+    A bar's ends are as far apart wherever it lies and whichever hand it has.
+    """
+    first = np.array(corners) - np.array(corners[0])
+    ways = [next((v for v in axis if abs(v) > SURE), 1.0) for axis in first.T.tolist()]
+    rows = np.round(first * np.sign(ways), 6) + 0.0
+    return tuple((float(x), float(y), float(z)) for x, y, z in rows)
+
+
+@lru_cache(maxsize=1024)
+def _self_gap(corners: tuple[Point, ...], mandrels: tuple[float, ...], dia: float) -> float:
+    pieces = pieces_of((((corners, mandrels, dia, ((0.0, 0.0, 0.0),)), dia / 2),))
+    third = line_through(corners, mandrels, dia).length / 3
     length = np.where(
         pieces.radius > 0,
         pieces.radius * (pieces.t1 - pieces.t0),
@@ -203,7 +235,8 @@ def undeclared(cage: Cage) -> tuple[Gap, ...]:
         if g.gap < -TOUCH or (g.gap <= MEETING and g.declared is None)
     ]
     for bar in cage.bars:
-        if bar.role in (Role.LINK, Role.TIE) and self_gap(bar) < -TOUCH:
-            gap, (x, y, z), (dx, dy, dz) = self_gap(bar), bar.corners[1], bar.placings[0]
+        gap = self_gap(bar) if bar.role in (Role.LINK, Role.TIE) else 0.0
+        if gap < -TOUCH:
+            (x, y, z), (dx, dy, dz) = bar.corners[1], bar.placings[0]
             found.append(Gap(bar.id, 0, bar.id, 0, gap, (x + dx, y + dy, z + dz), None))
     return tuple(found)

@@ -9,12 +9,15 @@ from typing import TypeAlias
 import numpy as np
 from numpy.typing import NDArray
 
-from detailer.cage.bar import Bar
-from detailer.cage.line import Arc, centre_line
+from detailer.cage.bar import Point
+from detailer.cage.line import Arc, line_through
 
 Array: TypeAlias = NDArray[np.float64]
 Whole: TypeAlias = NDArray[np.intp]
 Flags: TypeAlias = NDArray[np.bool_]
+
+Form: TypeAlias = tuple[tuple[Point, ...], tuple[float, ...], float, tuple[Point, ...]]
+"""A bar as geometry alone: corners, mandrels, diameter, placings."""
 
 WIDEST = radians(45.0)
 """A bend is first looked at in parts that turn no further than this."""
@@ -57,21 +60,21 @@ class Pieces:
         return np.asarray(self.radius * (1 - np.cos((self.t1 - self.t0) / 2)))
 
 
-def pieces_of(bars: tuple[tuple[Bar, float], ...]) -> Pieces:
+def pieces_of(bars: tuple[tuple[Form, float], ...]) -> Pieces:
     """Return the pieces of all real bars, numbered bar by bar, placing by placing.
 
     Parameters
     ----------
-    bars : tuple of (Bar, radius)
-        The bars, each with the radius of its steel. [mm]
+    bars : tuple of (Form, radius)
+        The forms of bars, each with the radius of its steel. [mm]
     """
     tables, owner, shift, thick, number = [], [], [], [], 0
-    for bar, radius in bars:
-        table = _template(bar)
-        count = len(bar.placings)
+    for (corners, mandrels, dia, placings), radius in bars:
+        table = _template(corners, mandrels, dia)
+        count = len(placings)
         tables.append(np.tile(table, (count, 1)))
         owner.append(np.repeat(np.arange(number, number + count), len(table)))
-        shift.append(np.repeat(np.array(bar.placings, dtype=float), len(table), axis=0))
+        shift.append(np.repeat(np.array(placings, dtype=float), len(table), axis=0))
         thick.append(np.full(count * len(table), radius))
         number += count
     rows = np.concatenate(tables) if tables else np.zeros((0, 14))
@@ -84,9 +87,9 @@ def pieces_of(bars: tuple[tuple[Bar, float], ...]) -> Pieces:
     )  # fmt: skip
 
 
-def _template(bar: Bar) -> Array:
+def _template(corners: tuple[Point, ...], mandrels: tuple[float, ...], dia: float) -> Array:
     rows: list[tuple[float, ...]] = []
-    segments = centre_line(bar).segments
+    segments = line_through(corners, mandrels, dia).segments
     for i, piece in enumerate(segments):
         first, last = i == 0, i == len(segments) - 1
         if not isinstance(piece, Arc):
