@@ -6,7 +6,7 @@ from dataclasses import dataclass
 from enum import Enum
 from itertools import pairwise
 from math import ceil
-from typing import Any
+from typing import Any, TypeAlias
 
 import numpy as np
 import shapely
@@ -15,9 +15,12 @@ from detailer.cage.bar import Bar, Cage
 from detailer.cage.clearance import steel_radius
 from detailer.cage.cut import outline_at
 from detailer.cage.line import Arc, centre_line
-from detailer.cage.pieces import Array
+from detailer.cage.pieces import Array, Whole
 
 _SHAPELY: Any = shapely  # its functions carry no types
+
+_Sides: TypeAlias = tuple[tuple[float, float], ...]
+"""Least distance to each side, and where it is. [mm]"""
 
 STEP = 25.0
 """Straights are looked at in steps of this. [mm]"""
@@ -79,8 +82,10 @@ def covers(cage: Cage, *, ribs: bool = False) -> tuple[BarCover, ...]:
     for bar in cage.bars:
         points, along = _samples(bar, edges)
         radius = steel_radius(bar, ribs=ribs)
+        known: dict[tuple[int, float, float], _Sides] = {}
         for k, placing in enumerate(bar.placings):
-            found.append(_cover(bar, k, points + np.array(placing), along, radius, edges, faces))
+            moved = points + np.array(placing)
+            found.append(_cover(bar, k, moved, along, radius, edges, faces, known))
     return tuple(found)
 
 
@@ -136,27 +141,44 @@ def _faces(outline: Any) -> _Faces:
 
 def _cover(
     bar: Bar, placing: int, points: Array, along: Array, radius: float,
-    edges: list[float], faces: list[_Faces],
+    edges: list[float], faces: list[_Faces], known: dict[tuple[int, float, float], _Sides],
 ) -> BarCover:  # fmt: skip
-    least, xs = [float("inf")] * 6, [float(points[0, 0])] * 6
-
-    def keep(side: int, distances: Array, at: Array) -> None:
-        i = int(np.argmin(distances))
-        if distances[i] < least[side]:
-            least[side], xs[side] = float(distances[i]), float(at[i])
-
     reach = radius * np.sqrt(np.maximum(1 - along[:, 0] ** 2, 0.0))
-    keep(4, points[:, 0] - reach - edges[0], points[:, 0])
-    keep(5, edges[-1] - points[:, 0] - reach, points[:, 0])
-    interval = np.clip(np.searchsorted(edges, points[:, 0], side="right") - 1, 0, len(faces) - 1)
-    for n in np.unique(interval):
-        rows = np.flatnonzero(interval == n)
-        distances = _to_faces(points[rows, 1:], along[rows, 1:], radius, faces[n])
+    xs = points[:, 0]
+    ends = _least(xs - reach - edges[0], xs), _least(edges[-1] - xs - reach, xs)
+    interval = np.clip(np.searchsorted(edges, xs, side="right") - 1, 0, len(faces) - 1)
+    dx, dy, dz = bar.placings[placing]
+    if (interval == interval[0]).all():
+        key = (int(interval[0]), dy, dz)
+        if key not in known:
+            rows = np.arange(len(xs))
+            found = _sides(points, along, radius, [(rows, faces[key[0]])])
+            known[key] = tuple((far, x - dx) for far, x in found)
+        sides = tuple((far, x + dx) for far, x in known[key])
+    else:
+        parts = [(np.flatnonzero(interval == n), faces[n]) for n in np.unique(interval)]
+        sides = _sides(points, along, radius, parts)
+    least = (*sides, *ends)
+    return BarCover(bar.id, placing, tuple(far for far, _ in least), tuple(x for _, x in least))
+
+
+def _least(distances: Array, at: Array) -> tuple[float, float]:
+    """Return the least distance and where it is."""
+    i = int(np.argmin(distances))
+    return float(distances[i]), float(at[i])
+
+
+def _sides(points: Array, along: Array, radius: float, parts: list[tuple[Whole, _Faces]]) -> _Sides:
+    """Return the least distance to top, bottom, left and right, and where each is."""
+    found = [(float("inf"), float(points[0, 0]))] * 4
+    for rows, faces in parts:
+        distances = _to_faces(points[rows, 1:], along[rows, 1:], radius, faces)
         for side in range(4):
-            mine = distances[:, faces[n].side == side]
+            mine = distances[:, faces.side == side]
             if mine.size:
-                keep(side, mine.min(axis=1), points[rows, 0])
-    return BarCover(bar.id, placing, tuple(least), tuple(xs))
+                here = _least(mine.min(axis=1), points[rows, 0])
+                found[side] = min(found[side], here, key=lambda item: item[0])
+    return tuple(found)
 
 
 def _to_faces(at: Array, along: Array, radius: float, faces: _Faces) -> Array:
