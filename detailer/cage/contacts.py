@@ -3,12 +3,13 @@
 from __future__ import annotations
 
 from dataclasses import replace
+from functools import lru_cache
 from itertools import product
 
-from detailer.cage.bar import Bar, Cage, Contact
+from detailer.cage.bar import Bar, Cage, Contact, Point
 from detailer.cage.clearance import Gap, gaps, self_gap
-from detailer.cage.line import centre_line
-from detailer.cage.vec import add, distance, dot, norm, sub, times, unit
+from detailer.cage.line import centre_line, line_through
+from detailer.cage.vec import add, distance, dot, sub, times, unit
 from detailer.values import TOUCH, ContactKind, Role
 
 LAP_STEP = 25.0
@@ -105,19 +106,29 @@ def _on_tail(holder: Bar, placing: int, gap: Gap, half: float) -> bool:
     """Return whether a contact lies on the straight tail of a hook, past its first 2 mm."""
     if len(holder.corners) < 4:
         return False
-    at = sub(gap.at, holder.placings[placing])
-    segments = centre_line(holder).segments
-    for tip, root in (
-        (segments[0].start, segments[0].end),
-        (segments[-1].end, segments[-1].start),
-    ):
-        way = sub(root, tip)
-        size = norm(way)
-        share = dot(sub(at, tip), way) / max(size, 1e-9)
+    x, y, z = sub(gap.at, holder.placings[placing])
+    near = half + TOUCH / 2
+    for (tx, ty, tz), (ux, uy, uz), size in _tails(holder.corners, holder.mandrels, holder.dia):
+        share = (x - tx) * ux + (y - ty) * uy + (z - tz) * uz
         share = min(max(share, 0.0), max(size - 2.0, 0.0))
-        if distance(at, add(tip, unit(way), share)) <= half + TOUCH / 2:
+        if abs(y - ty - share * uy) > near or abs(z - tz - share * uz) > near:
+            continue
+        if distance((x, y, z), (tx + share * ux, ty + share * uy, tz + share * uz)) <= near:
             return True
     return False
+
+
+@lru_cache(maxsize=256)
+def _tails(
+    corners: tuple[Point, ...], mandrels: tuple[float, ...], dia: float
+) -> tuple[tuple[Point, Point, float], ...]:
+    """Return tip, direction and length of the first and the last straight of a bar."""
+    segments = line_through(corners, mandrels, dia).segments
+    ends = (
+        (segments[0].start, segments[0].end),
+        (segments[-1].end, segments[-1].start),
+    )
+    return tuple((tip, unit(sub(root, tip)), distance(tip, root)) for tip, root in ends)
 
 
 def _touch_problem(a: Bar, b: Bar, contact: Contact, found: tuple[Gap, ...]) -> str | None:

@@ -175,11 +175,12 @@ def _use(
     values = demand.tension(face, xs)
     cache: dict[tuple[int, tuple[int, ...]], float] = {}
     used = np.zeros(len(xs))
-    for i, x in enumerate(xs):
-        if values[i] <= 0:
-            continue
-        span = lapping.beam.span_at(float(x))
-        there = tuple(n for n, o in enumerate(lapping.others) if o.covers(float(x)))
+    starts = np.array([other.x0 for other in lapping.others])[:, None]
+    stops = np.array([other.x1 for other in lapping.others])[:, None]
+    present = ((starts <= xs) & (xs <= stops)).T
+    for i in np.flatnonzero(values > 0).tolist():
+        span = lapping.beam.span_at(float(xs[i]))
+        there = tuple(np.flatnonzero(present[i]).tolist())
         key = (span.number, there)
         if key not in cache:
             extra = tuple((lapping.others[n].dia, lapping.others[n].z) for n in there)

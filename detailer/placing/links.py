@@ -171,10 +171,13 @@ def link_bars(
         for k, ring in enumerate(rings(frame, zone, bars)):
             shift = k * (2 * zone.dia + 2.0)
             by_corner: dict[forms.HookCorner, list[float]] = {}
+            found: dict[tuple[object, int], forms.HookCorner] = {}  # by bars, odd or even
             for x in row.xs:
                 there = tuple((*s.at(x), s.dia) for s in near if s.covers(x))
-                corner = _hook_corner(frame, ring, zone.dia, there, number)
-                by_corner.setdefault(corner, []).append(x + shift)
+                key = (there, number % 2)
+                if key not in found:
+                    found[key] = _hook_corner(frame, ring, zone.dia, there, number)
+                by_corner.setdefault(found[key], []).append(x + shift)
                 number += 1
             for corner, xs in by_corner.items():
                 name = f"L{row.span}.{index + 1}.{k + 1}.{corner.name.lower()}"
