@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from bisect import bisect_right
 from dataclasses import dataclass
 from enum import Enum
 from itertools import pairwise
@@ -14,7 +15,7 @@ import shapely
 from detailer.cage.bar import Bar, Cage
 from detailer.cage.clearance import steel_radius
 from detailer.cage.cut import outline_at
-from detailer.cage.line import Arc, centre_line
+from detailer.cage.line import Arc, Straight, centre_line
 from detailer.cage.pieces import Array, Whole
 
 _SHAPELY: Any = shapely  # its functions carry no types
@@ -81,17 +82,14 @@ def covers(cage: Cage, *, ribs: bool = False) -> tuple[BarCover, ...]:
     found = []
     for bar in cage.bars:
         points, along = _samples(bar, edges)
-        radius = steel_radius(bar, ribs=ribs)
-        known: dict[tuple[int, float, float], _Sides] = {}
-        for k, placing in enumerate(bar.placings):
-            moved = points + np.array(placing)
-            found.append(_cover(bar, k, moved, along, radius, edges, faces, known))
+        body = _Body(points, along, steel_radius(bar, ribs=ribs))
+        found += [_cover(bar, k, body, edges, faces) for k in range(len(bar.placings))]
     return tuple(found)
 
 
 def _samples(bar: Bar, edges: list[float]) -> tuple[Array, Array]:
     """Return points of a centre line and the directions there; steps across, breaks along x."""
-    rows = []
+    points, ways = [], []
     for piece in centre_line(bar).segments:
         if isinstance(piece, Arc):
             places = [piece.length * i / BEND_STEPS for i in range(BEND_STEPS + 1)]
@@ -105,9 +103,34 @@ def _samples(bar: Bar, edges: list[float]) -> tuple[Array, Array]:
                 for x in edges:
                     for s in piece.crossings(x - dx):
                         places += [max(0.0, s - 0.01), min(whole, s + 0.01)]
-        rows += [(*p, *d) for p, d in (piece.at(s) for s in places)]
-    table = np.array(rows)
-    return table[:, :3], table[:, 3:]
+        at, way = _along(piece, np.array(places)[:, None])
+        points.append(at)
+        ways.append(way)
+    return np.concatenate(points), np.concatenate(ways)
+
+
+def _along(piece: Straight | Arc, s: Array) -> tuple[Array, Array]:
+    """Return points and directions of a piece at a column of arc lengths."""
+    if isinstance(piece, Arc):
+        out, along = np.array(piece.out), np.array(piece.along)
+        turn = s / piece.radius
+        at = np.array(piece.centre) + piece.radius * (np.cos(turn) * out + np.sin(turn) * along)
+        return at, np.cos(turn) * along - np.sin(turn) * out
+    start, end = np.array(piece.start), np.array(piece.end)
+    way = (end - start) / max(piece.length, 1e-12)
+    return start + s * way, np.repeat(way[None], len(s), axis=0)
+
+
+class _Body:
+    """A bar's points without its placing, and what was found of its cover so far."""
+
+    def __init__(self, points: Array, along: Array, radius: float) -> None:
+        self.points, self.along, self.radius = points, along, radius
+        xs = points[:, 0]
+        reach = radius * np.sqrt(np.maximum(1 - along[:, 0] ** 2, 0.0))
+        self.span = float(xs.min()), float(xs.max())
+        self.start, self.end = _least(xs - reach, xs), _least(-xs - reach, xs)
+        self.known: dict[tuple[int, float, float], _Sides] = {}
 
 
 @dataclass(frozen=True, slots=True)
@@ -140,26 +163,26 @@ def _faces(outline: Any) -> _Faces:
 
 
 def _cover(
-    bar: Bar, placing: int, points: Array, along: Array, radius: float,
-    edges: list[float], faces: list[_Faces], known: dict[tuple[int, float, float], _Sides],
-) -> BarCover:  # fmt: skip
-    reach = radius * np.sqrt(np.maximum(1 - along[:, 0] ** 2, 0.0))
-    xs = points[:, 0]
-    ends = _least(xs - reach - edges[0], xs), _least(edges[-1] - xs - reach, xs)
-    interval = np.clip(np.searchsorted(edges, xs, side="right") - 1, 0, len(faces) - 1)
+    bar: Bar, placing: int, body: _Body, edges: list[float], faces: list[_Faces]
+) -> BarCover:
     dx, dy, dz = bar.placings[placing]
-    if (interval == interval[0]).all():
-        key = (int(interval[0]), dy, dz)
-        if key not in known:
-            rows = np.arange(len(xs))
-            found = _sides(points, along, radius, [(rows, faces[key[0]])])
-            known[key] = tuple((far, x - dx) for far, x in found)
-        sides = tuple((far, x + dx) for far, x in known[key])
+    first, last = (min(max(bisect_right(edges, x + dx) - 1, 0), len(faces) - 1) for x in body.span)
+    if first == last:
+        key = (first, dy, dz)
+        if key not in body.known:
+            rows = np.arange(len(body.points))
+            moved = body.points + np.array((0.0, dy, dz))
+            body.known[key] = _sides(moved, body.along, body.radius, [(rows, faces[first])])
+        sides = tuple((far, x + dx) for far, x in body.known[key])
     else:
+        moved = body.points + np.array((dx, dy, dz))
+        interval = np.searchsorted(edges, moved[:, 0], side="right") - 1
+        interval = np.clip(interval, 0, len(faces) - 1)
         parts = [(np.flatnonzero(interval == n), faces[n]) for n in np.unique(interval)]
-        sides = _sides(points, along, radius, parts)
-    least = (*sides, *ends)
-    return BarCover(bar.id, placing, tuple(far for far, _ in least), tuple(x for _, x in least))
+        sides = _sides(moved, body.along, body.radius, parts)
+    (near, start), (far, end) = body.start, body.end
+    least = (*sides, (near + dx - edges[0], start + dx), (far - dx + edges[-1], end + dx))
+    return BarCover(bar.id, placing, tuple(d for d, _ in least), tuple(x for _, x in least))
 
 
 def _least(distances: Array, at: Array) -> tuple[float, float]:
