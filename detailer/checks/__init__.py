@@ -6,15 +6,24 @@ from collections.abc import Callable, Iterator
 
 from detailer.checks import (
     anchorage,
+    bends,
     clash,
     cover,
     cutoffs,
     deflection,
     depth,
+    ends,
+    given_cover,
     laps,
+    layers,
+    links,
     resistance,
+    seat,
     shear,
+    side_steel,
+    sizes,
     spacing,
+    steel_amount,
     stock,
 )
 from detailer.checks.case import Case
@@ -24,8 +33,17 @@ __all__ = ["CHECKS", "Case", "run"]
 
 CHECKS: tuple[tuple[str, Callable[[Case], Iterator[Finding]]], ...] = (
     ("clashes and contacts of bars", clash.check),
+    ("cover as given", given_cover.check),
     ("cover as placed", cover.check),
-    ("clear spacing in a layer", spacing.check),
+    ("clear spacing, nominal and over ribs", spacing.check),
+    ("least and most steel, widest spacing", steel_amount.check),
+    ("layers held", layers.check),
+    ("bars in the corners of links", seat.check),
+    ("bends and legs", bends.check),
+    ("sizes and grades", sizes.check),
+    ("ends in supports, butts, gaps", ends.check),
+    ("side-face steel", side_steel.check),
+    ("links along the line", links.check),
     ("bars longer than the stock", stock.check),
     ("bending resistance along the line", resistance.check),
     ("depth placed and depth assumed", depth.check),
