@@ -7,7 +7,7 @@ from dataclasses import dataclass
 from itertools import pairwise
 
 from detailer.cage.bar import Cage
-from detailer.cage.cut import bars_at, links_at, outline_at
+from detailer.cage.cut import CutBar, bars_at, links_at, outline_at
 from detailer.cage.line import Straight, centre_line
 from detailer.values import ContactKind, Role
 
@@ -58,10 +58,11 @@ def cuts_of(cage: Cage, clear: tuple[tuple[float, float], ...]) -> tuple[Cut, ..
     found: list[tuple[float, object]] = []
     shown: set[tuple[int, object]] = set()
     for place in sorted(_places(cage, clear), key=lambda p: (not p.wanted, p.x)):
-        same = place.span, _stock(cage, place.x)
+        bars = bars_at(cage, place.x)
+        same = place.span, _stock(cage, place.x, bars)
         if not place.wanted and same in shown:
             continue
-        seen = signature(cage, place.x)
+        seen = signature(cage, place.x, bars)
         if place.wanted or seen not in letters:
             letters[seen] = ""
             shown.add(same)
@@ -85,7 +86,7 @@ def letter(number: int) -> str:
     return letter(more - 1) + letters[rest] if more else letters[rest]
 
 
-def signature(cage: Cage, x: float) -> object:
+def signature(cage: Cage, x: float, bars: tuple[CutBar, ...]) -> object:
     """Return what makes two sections equal: concrete, bars by mark and place, kind of links.
 
     Parameters
@@ -94,20 +95,20 @@ def signature(cage: Cage, x: float) -> object:
         The cage.
     x : float
         Where it is cut. [mm]
+    bars : tuple of CutBar
+        What is cut there.
     """
     outline = outline_at(cage.prisms, x)
     top = outline.bounds[3] if not outline.is_empty else 0.0
     shape = tuple(round(v) for v in (*outline.bounds[:3:2], outline.area)) if top == top else ()
-    bars = tuple(
-        sorted((c.bar.name, round(c.y), round(c.z - top)) for c in bars_at(cage, x) if c.square)
-    )
+    marks = tuple(sorted((c.bar.name, round(c.y), round(c.z - top)) for c in bars if c.square))
     links = tuple(sorted({bar.name for bar, _ in links_at(cage, x)}))
-    return shape, bars, links
+    return shape, marks, links
 
 
-def _stock(cage: Cage, x: float) -> object:
+def _stock(cage: Cage, x: float, cut: tuple[CutBar, ...]) -> object:
     """Return the sizes cut at each face and layer, and the laps they are cut in."""
-    bars = (c.bar for c in bars_at(cage, x) if c.square)
+    bars = (c.bar for c in cut if c.square)
     sizes = tuple(sorted((bar.face.value, bar.layer, bar.dia) for bar in bars))
     laps = tuple(
         (contact.a, contact.b)

@@ -7,6 +7,7 @@ would cover another end a little further from it; only the picture moves, never 
 from __future__ import annotations
 
 from dataclasses import dataclass, replace
+from functools import lru_cache
 
 from detailer.cage.bar import Bar, Cage
 from detailer.values import Face, Role
@@ -97,7 +98,8 @@ def _outer_first(strand: Strand) -> tuple[object, ...]:
     return bar.layer, -(strand.x1 - strand.x0), strand.x0, bar.id
 
 
-def _lines(cage: Cage) -> list[Strand]:
+@lru_cache(maxsize=1)
+def _lines(cage: Cage) -> tuple[Strand, ...]:
     """Return one strand for all real bars of one mark that an elevation shows on one line."""
     lines: dict[tuple[object, ...], list[Strand]] = {}
     for bar in cage.bars:
@@ -115,7 +117,7 @@ def _lines(cage: Cage) -> list[Strand]:
                     break
             else:
                 alike.append(Strand(bar=bar, count=1, true=here, drawn=here))
-    return [strand for alike in lines.values() for strand in alike]
+    return tuple(strand for alike in lines.values() for strand in alike)
 
 
 def _lane(

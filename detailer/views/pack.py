@@ -146,7 +146,11 @@ def _rest(
 
 def _left(free: list[Room], taken: Room) -> list[Room]:
     """Return the largest rectangles left, none within another."""
-    rest = dict.fromkeys(part for room in free for part in room.without(taken))
+    whole = [room for room in free if not room.meets(taken)]
+    parts = [part for room in free if room.meets(taken) for part in room.without(taken)]
+    if not parts:
+        return whole
+    rest = list(dict.fromkeys((*whole, *parts)))
     return [room for room in rest if not any(room.within(other) for other in rest)]
 
 

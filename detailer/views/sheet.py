@@ -26,6 +26,9 @@ from detailer.views.table import table_items, table_of
 SECTION_SCALES = (10.0, 15.0, 20.0)
 """Scales of sections, the largest picture first."""
 
+MOST_HALVES = 5
+"""Two groups of sections are tried with so many sizes of the first."""
+
 MOST_GROUPS = 3
 """Sections may stand in so many groups on a sheet."""
 
@@ -241,10 +244,10 @@ def _blocks(
 
 
 def _groupings(count: int) -> Iterator[tuple[tuple[int, int], ...]]:
-    """Yield sections in one group, in two of any sizes, in more of equal ones."""
+    """Yield sections in one group, in two of nearly equal sizes, in more of equal ones."""
     yield ((0, count),)
     halves = sorted(range(1, count), key=lambda k: (abs(2 * k - count), -k))
-    yield from (((0, k), (k, count)) for k in halves)
+    yield from (((0, k), (k, count)) for k in halves[:MOST_HALVES])
     for parts in range(3, MOST_GROUPS + 1):
         size = -(-count // parts)
         yield tuple((i, min(i + size, count)) for i in range(0, count, size))

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cached_property
 from math import hypot, radians, tan
 
 from detailer.cage.bar import Bar, Point
@@ -16,19 +17,19 @@ CHORDS = 8
 """An arc seen askew is drawn in so many chords."""
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True)
 class Trace:
     """A bar in the plane of a picture; `bulges` as in :class:`Path`, one a point."""
 
     points: tuple[XY, ...]
     bulges: tuple[float, ...]
 
-    @property
+    @cached_property
     def low(self) -> XY:
         """Return the lower left corner of the points' box."""
         return min(p[0] for p in self.points), min(p[1] for p in self.points)
 
-    @property
+    @cached_property
     def high(self) -> XY:
         """Return the upper right corner of the points' box."""
         return max(p[0] for p in self.points), max(p[1] for p in self.points)

@@ -67,7 +67,8 @@ def make_view(
             tag=Tag(name.split(" ", 1)[0]),
         )
         drawn = (*drawn, label)
-        x0, y0, x1, y1 = box_of(drawn, scale)
+        a0, b0, a1, b1 = box_of((label,), scale)
+        x0, y0, x1, y1 = min(x0, a0), min(y0, b0), max(x1, a1), max(y1, b1)
     return View(name=name, title=title, scale=scale, items=drawn, box=(x0, y0, x1, y1))
 
 
@@ -104,7 +105,12 @@ def label_box(label: Label, scale: float) -> tuple[float, float, float, float]:
 def _corners(item: Primitive, scale: float) -> Iterator[XY]:
     match item:
         case Path():
-            half = item.width / 2 if item.width is not None else 0.0
+            if item.width is None:
+                yield from item.points
+                if item.bulges:
+                    yield from _bows(item)
+                return
+            half = item.width / 2
             for x, y in (*item.points, *_bows(item)):
                 yield x - half, y - half
                 yield x + half, y + half

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections import Counter
 from collections.abc import Iterator
 from dataclasses import dataclass
+from functools import lru_cache
 from itertools import pairwise
 
 from detailer.cage.bar import Bar, Cage
@@ -75,6 +76,7 @@ def link_size(dia: float, legs: int) -> str:
     return f"{legs}L-T{dia:.0f}" if legs else f"T{dia:.0f}"
 
 
+@lru_cache(maxsize=1)
 def link_sets(cage: Cage) -> tuple[LinkSet, ...]:
     """Return the link sets of a cage from left to right.
 

@@ -13,7 +13,7 @@ import pytest
 from example_cage import LEFT, LEFT2, RIGHT, RIGHT2, example_cage
 
 from detailer.cage.bar import Cage
-from detailer.cage.cut import cut
+from detailer.cage.cut import bars_at, cut
 from detailer.drawing.metrics import width as text_width
 from detailer.drawing.primitives import Dimension, Disc, Label, Path, Pen, Primitive
 from detailer.values import Face, Role
@@ -220,7 +220,8 @@ def test_call_outs_of_sections_add_up(cage: Cage) -> None:
 def test_equal_sections_share_a_letter_and_no_others_do(cage: Cage) -> None:
     cuts = cuts_of(cage, clear_spans(cage))
     for a, b in combinations(cuts, 2):
-        assert (a.letter == b.letter) == (signature(cage, a.x) == signature(cage, b.x))
+        seen = [signature(cage, c.x, bars_at(cage, c.x)) for c in (a, b)]
+        assert (a.letter == b.letter) == (seen[0] == seen[1])
     for x0, x1 in clear_spans(cage):
         places = [c.x for c in cuts if x0 < c.x < x1]
         assert any(x - x0 <= 150 for x in places)
