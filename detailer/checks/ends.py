@@ -196,7 +196,7 @@ def _butts(case: Case) -> Iterator[Finding]:
             if b is a or b.face is not a.face or b.layer != a.layer or not -300 < gap < 300:
                 continue
             yb, zb = b.at(b.tips[0])
-            if abs(yb - ya) > 2 * a.dia or abs(zb - za) > 2 * a.dia:
+            if max(abs(yb - ya), abs(zb - za)) > 1.1 * max(a.dia, b.dia):
                 continue
             key = tuple(sorted({a.mark, b.mark}))
             need = max(15 * min(a.dia, b.dia), 200.0)

@@ -258,11 +258,13 @@ def _holding(case: Case, span: Span, sets: list[LinkSet]) -> Iterator[Finding]:
     xs = case.envelope.sample(span, 100.0)
     least, most = case.envelope.moments(xs)
     for sagging, asked in ((True, np.maximum(most, 0)), (False, np.maximum(-least, 0))):
-        profile = case.steel.profile(xs, sagging=sagging, span=span)
-        for x, moment, resists in zip(xs, asked, profile, strict=True):
-            if not resists.compression_used or moment < 0.6 * resists.moment:
+        face = Face.TOP if sagging else Face.BOTTOM
+        others = tuple((b.id, b.placing) for b in case.steel.bars if b.face is face)
+        alone = case.steel.profile(xs, sagging=sagging, span=span, without=others)
+        for x, moment, resists in zip(xs, asked, alone, strict=True):
+            if moment <= resists.moment * 1.002:
                 continue
-            pressed = case.steel.at(float(x), Face.TOP if sagging else Face.BOTTOM)
+            pressed = case.steel.at(float(x), face)
             if not pressed:
                 continue
             _, s = case.shear.around(float(x), span)

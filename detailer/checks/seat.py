@@ -19,14 +19,14 @@ FAR = 45.0
 
 
 def check(case: Case) -> Iterator[Finding]:
-    """Yield corners where the bar sits off the legs, lies on its bend, or is missing.
+    """Yield the worst corner of a place where the bar sits off, lies on its bend, or is missing.
 
     Parameters
     ----------
     case : Case
         The member.
     """
-    seen: set[tuple[object, ...]] = set()
+    worst: dict[tuple[str, str], Finding] = {}
     for link in case.cage.bars:
         if link.role is not Role.LINK or len(link.corners) < 6:
             continue
@@ -34,10 +34,10 @@ def check(case: Case) -> Iterator[Finding]:
             x = link.corners[0][0] + dx
             for y, z in _inner_corners(link, dy, dz):
                 for finding in _corner(case, link, x, y, z):
-                    key = (finding.rule, finding.place, finding.bars)
-                    if key not in seen:
-                        seen.add(key)
-                        yield finding
+                    key = (finding.rule, finding.place.name)
+                    if key not in worst or finding.found > worst[key].found + 1e-9:
+                        worst[key] = finding
+    yield from worst.values()
 
 
 def _inner_corners(link: Bar, dy: float, dz: float) -> tuple[tuple[float, float], ...]:

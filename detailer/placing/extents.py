@@ -394,6 +394,10 @@ def _extra_end(run: Run, around: Around, side: int) -> tuple[float, End]:
         reach = _meeting(run, around, span, face, side)
     else:
         reach = _pushed_out(run, around, span, need, face, side, (x1 - x0) / 2)
+    far = span.right if side > 0 else span.left
+    if far is not None and not beam.continuous(far) and reach > x1 - x0:
+        past, end = _anchored(run, around, span, side, far, want)
+        return (x1 if side > 0 else x0) + side * past, end
     return face + side * max(reach, 0.0), _fixed_form(run, around, want)
 
 
