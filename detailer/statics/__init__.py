@@ -85,7 +85,7 @@ def _factored(points: tuple[tuple[float, float], ...]) -> tuple[tuple[float, flo
 
 
 def _from_stations(span: Span) -> SpanEnvelope:
-    """Return results as exported, linear between stations."""
+    """Return results as exported, linear between stations; the outer two stand at the ends."""
     if not isinstance(span.results, Stations):
         raise ValueError(f"span {span.number} carries no stations")
     rows = span.results.rows
@@ -93,9 +93,11 @@ def _from_stations(span: Span) -> SpanEnvelope:
     def column(name: str) -> Floats:
         return np.array([getattr(row, name) for row in rows], dtype=np.float64)
 
+    x = column("x") + span.x0
+    x[[0, -1]] = span.x0, span.x1
     return SpanEnvelope(
         number=span.number,
-        x=column("x") + span.x0,
+        x=x,
         m_max=column("m_max"),
         m_min=column("m_min"),
         v_max=column("v_max"),

@@ -11,6 +11,9 @@ from detailer.model import Beam, Span
 
 Floats = NDArray[np.float64]
 
+SAME = 1e-9
+"""Two stations no further apart are one place that stands twice. [mm]"""
+
 
 @dataclass(frozen=True, slots=True, kw_only=True, eq=False)
 class SpanEnvelope:
@@ -111,7 +114,9 @@ class Envelope:
         return any(bool(np.any(span.t > 0)) for span in self.spans)
 
     def sample(self, span: Span, step: float = 50.0) -> Floats:
-        """Return places between the faces of a span, faces and stations included. [mm]
+        """Return places between the faces of a span. [mm]
+
+        The faces are among them, the stations that were given, and where a value jumps.
 
         Parameters
         ----------
@@ -123,7 +128,8 @@ class Envelope:
         x0, x1 = self.beam.clear(span)
         count = max(2, int(np.ceil((x1 - x0) / step)) + 1)
         mine = next(s for s in self.spans if s.number == span.number)
-        own = mine.x[(mine.x > x0) & (mine.x < x1)] if len(mine.x) < 200 else mine.x[:0]
+        own = mine.x if self.form == "stations" else mine.x[:-1][np.diff(mine.x) < SAME]
+        own = own[(own > x0) & (own < x1)]
         return np.unique(np.concatenate([np.linspace(x0, x1, count), own]))
 
     def peak_sagging(self, span: Span) -> tuple[float, float]:
@@ -204,7 +210,7 @@ class Envelope:
 def _between(x: Floats, values: Floats, at: Floats, pick: np.ufunc) -> Floats:
     """Interpolate; at a place that stands twice take the worse of the two values."""
     result = np.interp(at, x, values)
-    jumps = np.nonzero(np.diff(x) < 1e-9)[0]
+    jumps = np.nonzero(np.diff(x) < SAME)[0]
     for i in jumps:
         same = np.abs(at - x[i]) < 1e-6
         if same.any():

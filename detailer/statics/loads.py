@@ -4,7 +4,6 @@ from __future__ import annotations
 
 import itertools
 from collections.abc import Iterator
-from dataclasses import dataclass
 
 import numpy as np
 
@@ -16,13 +15,6 @@ FACTOR = 1.5
 
 STEP = 50.0
 """Places of the envelope are no further apart. [mm]"""
-
-
-@dataclass(frozen=True, slots=True)
-class Case:
-    """Moments at the supports from the loads of one span."""
-
-    at_supports: Floats  # [N·mm], sagging +
 
 
 def stiffness(span: Span) -> float:
