@@ -200,10 +200,10 @@ def places(beam: Beam, span: Span) -> Floats:
     xs = set(np.linspace(0.0, span.length, count + 1).tolist())
     xs |= {x - span.x0 for x in beam.clear(span)}
     if isinstance(span.results, Loads):
-        at = [p.x for p in span.results.points]
-        xs |= set(at)
+        at = {p.x for p in span.results.points}
+        xs |= at
     else:
-        at = []
+        at = set()
     return np.array(sorted([*xs, *at]))
 
 
