@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import ast
 import re
 from pathlib import Path
 
@@ -50,3 +51,16 @@ def test_pictures_are_there() -> None:
     assert pictures
     for name in pictures:
         assert (ROOT / name).is_file(), name
+
+
+def test_every_rule_of_a_finding_is_told() -> None:
+    """The names of rules are the hyphenated words that checks hand to a finding."""
+    named: set[str] = set()
+    for path in sorted((ROOT / "detailer" / "checks").glob("*.py")):
+        for node in ast.walk(ast.parse(path.read_text(encoding="utf-8"))):
+            text = node.value if isinstance(node, ast.Constant) else None
+            if isinstance(text, str) and re.fullmatch(r"[a-z]+(-[a-z]+)+", text):
+                named.add(text)
+    assert named
+    missing = sorted(name for name in named if f"`{name}`" not in README)
+    assert not missing, f"the README's table of findings lacks {', '.join(missing)}"
