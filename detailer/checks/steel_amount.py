@@ -6,6 +6,7 @@ from collections.abc import Iterator
 from itertools import pairwise
 
 import numpy as np
+from numpy.typing import NDArray
 
 from detailer.checks.case import Case
 from detailer.checks.stations import Station, stations
@@ -15,6 +16,9 @@ from detailer.rules import is456
 from detailer.strength.development import Rod
 from detailer.strength.slices import area
 from detailer.values import Face, Required, Severity
+
+Floats = NDArray[np.float64]
+Flags = NDArray[np.bool_]
 
 FACES = (Face.BOTTOM, Face.TOP)
 
@@ -41,14 +45,14 @@ def check(case: Case) -> Iterator[Finding]:
                 yield finding
 
 
-def _tense(case: Case, face: Face, x: float, span: Span) -> bool:
-    """Return whether the envelope puts a face in tension; without one, by what is usual."""
+def _tense(case: Case, face: Face, xs: Floats, span: Span) -> Flags:
+    """Return where the envelope puts a face in tension; without one, by what is usual."""
     if case.envelope is None:
         x0, x1 = case.beam.clear(span)
-        inner = x0 + 0.25 * (x1 - x0) < x < x1 - 0.25 * (x1 - x0)
-        return inner if face is Face.BOTTOM else not inner
-    least, most = case.envelope.moment(x)
-    return (most if face is Face.BOTTOM else -least) > NO_TENSION
+        inner = (x0 + 0.25 * (x1 - x0) < xs) & (xs < x1 - 0.25 * (x1 - x0))
+        return inner if face is Face.BOTTOM else ~inner
+    least, most = case.envelope.moments(xs)
+    return np.asarray((most if face is Face.BOTTOM else -least) > NO_TENSION)
 
 
 def _least(case: Case, span: Span) -> Iterator[Finding]:
@@ -57,10 +61,8 @@ def _least(case: Case, span: Span) -> Iterator[Finding]:
     fy = case.project.steel.main.fy
     for face in FACES:
         worst: tuple[float, float, float, Required] | None = None
-        for x in np.linspace(x0 + 1, x1 - 1, max(3, int((x1 - x0) / 100))):
-            at = float(x)
-            if not _tense(case, face, at, span):
-                continue
+        xs = np.linspace(x0 + 1, x1 - 1, max(3, int((x1 - x0) / 100)))
+        for at in xs[_tense(case, face, xs, span)].tolist():
             have = sum(area(bar.dia) for bar in case.steel.at(at, face))
             d = case.steel.depth(at, face, span) or span.section.depth - 50
             need = is456.min_tension_steel(span.section.width, d, fy)
@@ -123,7 +125,7 @@ def _widest(case: Case, station: Station) -> Iterator[Finding]:
     need = is456.max_clear_gap(case.project.steel.main.fy)
     for face in FACES:
         row = station.layer(face, 1)
-        if len(row) < 2 or not _tense(case, face, station.x, span):
+        if len(row) < 2 or not _tense(case, face, np.array([station.x]), span)[0]:
             continue
         gap, a, b = _largest(station, row)
         if gap <= need.value + 0.1:
