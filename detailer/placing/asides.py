@@ -2,52 +2,90 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable
+from collections.abc import Callable, Iterable, Iterator
 from dataclasses import dataclass, replace
 from math import hypot, sqrt
+from typing import NamedTuple
 
-from detailer.model import Project
-from detailer.placing.frame import gap_needed
+from detailer.placing.frame import Frame, gap_needed
 from detailer.placing.strand import Strand
 from detailer.values import Face
 
-NEAR = 20.0
+NEAR = 25.0
 """Ends in one line closer than this count as meeting. [mm]"""
 
+OVERLAP = 50.0
+"""Bars whose ends just meet are made to pass each other by this. [mm]"""
 
-@dataclass(frozen=True, slots=True)
-class Move:
-    """One way for a strand to get out of another's way, and what it leaves undone."""
+TOUCH = 0.2
+"""Bars this close lie against each other. [mm]"""
 
-    strand: Strand
+TAIL = 400.0
+"""A bar must go on this far past those it passes before it can crank back. [mm]"""
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Settling:
+    """What decides whether bars may lie where they lie."""
+
+    aggregate: float
+    room: Callable[[float, float], Frame]  # inside the links between two places
+    together: frozenset[tuple[int, int]]  # runs whose places were chosen together
+
+    def need(self, a: Strand, b: Strand) -> float:
+        """Return the clear distance two bars of a layer need, with what ribs take. [mm]"""
+        larger = max(a.dia, b.dia)
+        return gap_needed(a.dia, b.dia, self.aggregate) + 0.18 * larger + 1.0
+
+    def lack(self, a: Strand, b: Strand) -> float:
+        """Return how much two bars lack to the distance they need; 0 where they touch."""
+        clear = _clear(a, b)
+        if abs(clear) < TOUCH:
+            return 0.0
+        if clear < 0:
+            return 100.0 - clear
+        if a.layer != b.layer:
+            return max(0.0, max(15.0, self.aggregate * 2 / 3, a.dia, b.dia) - clear)
+        return max(0.0, self.need(a, b) - clear)
+
+    def sat_together(self, a: Strand, b: Strand) -> bool:
+        """Return whether two strands were given their places together."""
+        if a.run == b.run:
+            return hypot(a.y - b.y, a.z - b.z) > 1.0
+        return (a.run, b.run) in self.together or (b.run, a.run) in self.together
+
+
+class Way(NamedTuple):
+    """One way out, and what it leaves undone; the least is the best."""
+
     conflicts: int
     lack: float
+    moved: float
+    order: int
+    strand: Strand
 
 
-def settle(
-    project: Project, strands: Iterable[Strand], seated_together: frozenset[tuple[int, int]]
-) -> tuple[Strand, ...]:
+def settle(strands: Iterable[Strand], settling: Settling) -> tuple[Strand, ...]:
     """Move strands aside until bars that overlap touch or keep their distance.
 
     Parameters
     ----------
-    project : Project
-        Its aggregate decides the distance.
     strands : iterable of Strand
         All bars of the beam, pieces of lapped bars included.
-    seated_together : frozenset of (int, int)
-        Pairs of runs whose places across the section were chosen together.
+    settling : Settling
+        Distances, room, and which runs were placed together.
 
     Notes
     -----
-    From left to right; the bar that starts later gives way: a bar that only meets the end of
-    another cranks its own end, towards the core first sideways, then in height; any other
-    bar moves as a whole.
+    From left to right; the bar that starts later gives way. A bar that only meets the end of
+    others cranks its own end; any other bar moves as a whole. Of all places against the bars
+    in its way (beside or above them) it takes the one that leaves the fewest conflicts, and
+    of those the nearest.
     """
     done: list[Strand] = []
     for strand in sorted(strands, key=lambda s: (s.face.value, s.x0, s.layer, s.y, s.run)):
         rivals = [o for o in done if o.face is strand.face and _share(o, strand) > -NEAR]
-        done.append(_give_way(project, strand, rivals, seated_together))
+        done.append(_give_way(strand, rivals, settling))
     return tuple(done)
 
 
@@ -56,84 +94,107 @@ def _share(a: Strand, b: Strand) -> float:
     return min(a.x1, b.x1) - max(a.x0, b.x0)
 
 
-def _together(a: Strand, b: Strand, pairs: frozenset[tuple[int, int]]) -> bool:
-    """Return whether two strands were given their places together."""
-    if a.run == b.run:
-        return hypot(a.y - b.y, a.z - b.z) > 1.0
-    return (a.run, b.run) in pairs or (b.run, a.run) in pairs
-
-
 def _clear(a: Strand, b: Strand) -> float:
     """Return the least clear distance of two strands where both are."""
     x0, x1 = max(a.x0, b.x0), min(a.x1, b.x1)
-    xs = {x0, x1, (x0 + x1) / 2}
+    xs = {x0, x1}
     for s in (a, b):
         if s.crank:
-            xs |= {x for x in (s.aside_to, s.aside_to + s.crank) if x0 <= x <= x1}
+            steps = (s.aside_to + k * s.crank / 4 for k in range(5))
+            xs |= {x for x in steps if x0 <= x <= x1}
     touch = (a.dia + b.dia) / 2
-    least = float("inf")
-    for x in xs:
-        (ya, za), (yb, zb) = a.at(x), b.at(x)
-        least = min(least, hypot(ya - yb, za - zb) - touch)
-    return least
+    return min(hypot(a.at(x)[0] - b.at(x)[0], a.at(x)[1] - b.at(x)[1]) for x in xs) - touch
 
 
-def _lack(project: Project, a: Strand, b: Strand) -> float:
-    """Return how much two strands lack to the distance they need; 0 where they touch."""
-    clear = _clear(a, b)
-    if abs(clear) < 0.2:
-        return 0.0
-    if clear < 0:
-        return 100.0 - clear
-    if a.layer != b.layer and abs(a.z - b.z) > (a.dia + b.dia) / 2:
-        return 0.0
-    return max(0.0, gap_needed(a.dia, b.dia, project.concrete.aggregate) - clear)
-
-
-def _give_way(
-    project: Project,
-    strand: Strand,
-    rivals: list[Strand],
-    pairs: frozenset[tuple[int, int]],
-) -> Strand:
+def _give_way(strand: Strand, rivals: list[Strand], settling: Settling) -> Strand:
     """Return the strand, moved where it would meet another."""
+    plain = strand if strand.aside != (0.0, 0.0) else replace(strand, aside_to=0.0)
     clashing = [
-        o for o in rivals if not _together(strand, o, pairs) and _lack(project, strand, o) > 1e-6
+        o for o in rivals if not settling.sat_together(plain, o) and settling.lack(plain, o) > 1e-6
     ]
     if not clashing:
-        return strand if strand.aside != (0.0, 0.0) else replace(strand, aside_to=0.0)
-    first = min(clashing, key=lambda o: (_clear(strand, o), o.y))
-    best: Move | None = None
-    for candidate in _moves(strand, first, clashing):
-        lacks = [_lack(project, candidate, o) for o in rivals]
-        move = Move(candidate, sum(1 for v in lacks if v > 1e-6), round(sum(lacks), 3))
-        if best is None or (move.conflicts, move.lack) < (best.conflicts, best.lack):
-            best = move
-        if move.conflicts == 0:
-            break
-    return best.strand if best else strand
+        return plain
+    met = min(_share(strand, o) for o in clashing)
+    if met < OVERLAP and min(o.x0 for o in clashing) < strand.x0:
+        strand = replace(strand, x0=strand.x0 - (OVERLAP - met))
+    best: Way | None = None
+    for order, way in enumerate(_ways(strand, rivals, clashing, settling)):
+        lacks = [settling.lack(way, o) for o in _counted(way, rivals, settling)]
+        moved = max(hypot(*way.aside), hypot(way.y - strand.y, way.z - strand.z))
+        found = Way(
+            sum(1 for v in lacks if v > 1e-6), round(sum(lacks), 2), round(moved, 2), order, way
+        )
+        if best is None or found[:4] < best[:4]:
+            best = found
+    return best.strand if best is not None else plain
 
 
-def _moves(strand: Strand, other: Strand, clashing: list[Strand]) -> Iterable[Strand]:
-    """Yield ways out, best liked first."""
-    touch = (strand.dia + other.dia) / 2
+def _counted(way: Strand, rivals: list[Strand], settling: Settling) -> Iterator[Strand]:
+    """Yield the bars a strand must keep its distance from.
+
+    Left out are bars of its own seating while neither has moved, and bars beyond one that it
+    touches and that they touch too: these make one group.
+    """
+    touched = [o for o in rivals if abs(_clear(way, o)) < TOUCH]
+    for other in rivals:
+        clear = _clear(way, other)
+        unmoved = way.aside == (0.0, 0.0) and other.aside == (0.0, 0.0)
+        if unmoved and settling.sat_together(way, other) and clear > 1.0:
+            continue
+        grouped = clear > TOUCH and any(
+            o is not other and _share(o, other) > 0 and abs(_clear(o, other)) < TOUCH
+            for o in touched
+        )
+        if not grouped:
+            yield other
+
+
+def _ways(
+    strand: Strand, rivals: list[Strand], clashing: list[Strand], settling: Settling
+) -> Iterator[Strand]:
+    """Yield ways out: beside or above each bar that is there, in the window they share."""
     meet = max(o.x1 for o in clashing)
-    tail_only = strand.x0 >= other.x0 and meet < strand.x1 - 500
-    start = max(strand.x0, other.x0)
-    oy, oz = other.at(start)
-    flat = sqrt(max(0.0, touch**2 - (strand.z - oz) ** 2))
+    start = strand.x0
+    tail_only = meet < strand.x1 - TAIL and strand.left.leg == 0
+    window = [o for o in rivals if o.x0 <= meet and o.x1 >= start]
+    near = settling.room(start, min(meet, strand.x1))
+    whole_room = settling.room(strand.x0, strand.x1)
+    for y, z in _places(strand, window, start, settling):
+        offset = (y - strand.y, z - strand.z)
+        if tail_only and _inside(near, y, z, strand.dia):
+            yield replace(strand, aside=offset, aside_to=meet + 10)
+        if not strand.corner and _inside(whole_room, y, z, strand.dia):
+            yield replace(strand.moved(*offset), aside=(0.0, 0.0), aside_to=0.0)
+    if strand.corner and not tail_only:
+        for y, z in _places(strand, window, start, settling):
+            if _inside(whole_room, y, z, strand.dia):
+                yield replace(
+                    strand.moved(y - strand.y, z - strand.z), aside=(0.0, 0.0), aside_to=0.0
+                )
+
+
+def _places(
+    strand: Strand, window: list[Strand], x: float, settling: Settling
+) -> Iterator[tuple[float, float]]:
+    """Yield (y, z) by each bar of a window: against it or clear of it, beside it or above it."""
     core = 1.0 if strand.face is Face.BOTTOM else -1.0
-    side = -1.0 if oy > 0 else 1.0
-    upright = core * sqrt(max(0.0, touch**2 - (strand.y - oy) ** 2))
-    sideways = [(oy + side * flat - strand.y, 0.0), (oy - side * flat - strand.y, 0.0)]
-    above = (0.0, oz + upright - strand.z)
-    cranked = [
-        replace(strand, aside=offset, aside_to=max(meet, strand.x0) + 10)
-        for offset in ((sideways[0], above) if strand.corner else (*sideways, above))
-        if tail_only
-    ]
-    whole = [
-        replace(strand.moved(*offset), aside=(0.0, 0.0), aside_to=0.0)
-        for offset in (*sideways, above)
-    ]
-    yield from (*cranked, *whole) if strand.corner else (*whole, *cranked)
+    for other in window:
+        oy, oz = other.at(max(x, other.x0))
+        touch = (strand.dia + other.dia) / 2
+        flat = touch**2 - (strand.z - oz) ** 2
+        side = -1.0 if oy > 0 else 1.0
+        clear = touch + settling.need(strand, other) + 0.1
+        for reach in (sqrt(flat) if flat > 0 else 0.0, clear):
+            if reach > 0:
+                yield oy + side * reach, strand.z
+                yield oy - side * reach, strand.z
+        upright = touch**2 - (strand.y - oy) ** 2
+        if upright > 0:
+            yield strand.y, oz + core * sqrt(upright)
+        yield oy, oz + core * touch
+
+
+def _inside(room: Frame, y: float, z: float, dia: float) -> bool:
+    """Return whether a bar lies inside the links."""
+    r = dia / 2 - 0.01
+    return room.right + r <= y <= room.left - r and room.bottom + r <= z <= room.top - r

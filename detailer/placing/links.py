@@ -12,7 +12,13 @@ from detailer.model import Beam, LinkZone, Project, Span
 from detailer.placing.frame import Frame
 from detailer.placing.strand import Strand
 from detailer.rules import is2502
-from detailer.values import Face, Role
+from detailer.values import EndForm, Face, Role
+
+LEG_STEP = 8.0
+"""Legs of bent ends are looked at in steps of this. [mm]"""
+
+LEG_ROOM = 130.0
+"""A link so near a bent end looks at the bend and the leg as one. [mm]"""
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -173,7 +179,7 @@ def link_bars(
             by_corner: dict[forms.HookCorner, list[float]] = {}
             found: dict[tuple[object, int], forms.HookCorner] = {}  # by bars, odd or even
             for x in row.xs:
-                there = tuple((*s.at(x), s.dia) for s in near if s.covers(x))
+                there = _around(near, x, zone.dia)
                 key = (there, number % 2)
                 if key not in found:
                     found[key] = _hook_corner(frame, ring, zone.dia, there, number)
@@ -182,6 +188,25 @@ def link_bars(
             for corner, xs in by_corner.items():
                 name = f"L{row.span}.{index + 1}.{k + 1}.{corner.name.lower()}"
                 yield _bar(name, ring, zone.dia, frame.bend, corner, xs, grade)
+
+
+def _around(
+    strands: tuple[Strand, ...], x: float, dia: float
+) -> tuple[tuple[float, float, float], ...]:
+    """Return (y, z, diameter) of what a link at x must clear: bars, and legs of bent ends."""
+    found = [(*s.at(x), s.dia) for s in strands if s.covers(x)]
+    for s in strands:
+        for end, tip, inward in ((s.left, s.x0, 1.0), (s.right, s.x1, -1.0)):
+            axis = tip + inward * s.dia / 2
+            if end.form is EndForm.STRAIGHT or abs(axis - x) > (s.dia + dia) / 2 + dia + LEG_ROOM:
+                continue
+            y, z = s.at(tip)
+            into = -1.0 if s.face is Face.TOP else 1.0
+            length = end.leg if end.form is EndForm.BEND else 8 * s.dia + 2 * s.dia
+            found += [
+                (y, z + into * k * LEG_STEP, s.dia) for k in range(int(length / LEG_STEP) + 1)
+            ]
+    return tuple(found)
 
 
 def _bar(

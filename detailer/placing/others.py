@@ -2,8 +2,8 @@
 
 from __future__ import annotations
 
-import itertools
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
+from itertools import pairwise
 
 from detailer.cage.bar import Bar
 from detailer.model import Beam, Project, Span
@@ -12,6 +12,12 @@ from detailer.placing.frame import Frame
 from detailer.placing.runs import in_line
 from detailer.placing.strand import Strand
 from detailer.values import Face, Role
+
+LINK_ROOM = 18.0
+"""What a spacer keeps from the axes of links, whose ends pass each other. [mm]"""
+
+REACH = 450.0
+"""A spacer may stand this far from where it is wanted. [mm]"""
 
 SIDE_INTO_SUPPORT = 150.0
 """Nominal side-face bars run this far into a support (common practice, no source). [mm]"""
@@ -111,6 +117,9 @@ def spacer_bars(
 ) -> Iterator[Bar]:
     """Yield spacer bars across the beam under every second and third layer.
 
+    They stand half way between links, where nothing but the layers they hold apart is in
+    their way; where no such place is near, none is placed and the checks say so.
+
     Parameters
     ----------
     project, beam : Project, Beam
@@ -120,32 +129,26 @@ def spacer_bars(
     strands : tuple of Strand
         Bars along the beam.
     link_xs : tuple of float
-        Where links stand, ascending; spacers stand between them. [mm]
+        Where links stand, ascending. [mm]
     dia : int
         Of the spacers. [mm]
     """
-    pitch = project.practice.spacer_pitch
-    wanted: dict[tuple[Face, int, float], set[float]] = {}
+    levels: dict[tuple[Face, int, float], list[Strand]] = {}
     for s in strands:
-        if s.layer < 2 or s.face not in (Face.TOP, Face.BOTTOM):
-            continue
-        into = -1.0 if s.face is Face.TOP else 1.0
-        level = round(s.z - into * (s.dia + dia) / 2, 3)
-        x0, x1 = s.x0 + 100, s.x1 - 100
-        count = max(2, int((x1 - x0) // pitch) + 2)
-        places = {
-            _between_links(x0 + (x1 - x0) * k / (count - 1), link_xs, dia) for k in range(count)
-        }
-        wanted.setdefault((s.face, s.layer, level), set()).update(places)
-    for number, ((face, layer, z), places) in enumerate(
-        sorted(wanted.items(), key=lambda i: (i[0][0].value, *i[0][1:]))
-    ):
-        for group, xs in _by_span(beam, _thinned(sorted(places), pitch)).items():
+        if s.layer >= 2 and s.face in (Face.TOP, Face.BOTTOM):
+            into = -1.0 if s.face is Face.TOP else 1.0
+            level = round(s.z - into * (s.dia + dia) / 2, 3)
+            levels.setdefault((s.face, s.layer, level), []).append(s)
+    order = sorted(levels, key=lambda k: (k[0].value, k[1], k[2]))
+    places = _free_places(strands, link_xs, dia)
+    for number, key in enumerate(order, start=1):
+        face, layer, z = key
+        xs = _places(levels[key], z, places, project.practice.spacer_pitch)
+        for group, at in _by_span(beam, xs).items():
             frame = frames[group]
-            half = (frame.width - 10) / 2
-            half = half // 5 * 5
+            half = (frame.width - 10) / 2 // 5 * 5
             yield Bar(
-                id=f"P{number + 1}.{group}",
+                id=f"P{number}.{group}",
                 role=Role.SPACER,
                 face=face,
                 layer=layer - 1,
@@ -153,24 +156,49 @@ def spacer_bars(
                 dia=float(dia),
                 corners=((0.0, frame.middle - half, z), (0.0, frame.middle + half, z)),
                 mandrels=(),
-                placings=tuple((x, 0.0, 0.0) for x in xs),
+                placings=tuple((x, 0.0, 0.0) for x in at),
             )
 
 
-def _between_links(x: float, link_xs: tuple[float, ...], dia: float) -> float:
-    """Return the nearest place half way between two links, or x where there are none near."""
-    gaps = [(a + b) / 2 for a, b in itertools.pairwise(link_xs) if b - a > dia + 20]
-    near = min(gaps, key=lambda g: (abs(g - x), g), default=x)
-    return near if abs(near - x) < 400 else x
+def _free_places(
+    strands: tuple[Strand, ...], link_xs: tuple[float, ...], dia: int
+) -> Callable[[float, float], float | None]:
+    """Return what finds the free place for a spacer at a level nearest to one wanted."""
+    between = [(a + b) / 2 for a, b in pairwise(link_xs) if b - a > dia + 2 * LINK_ROOM]
+
+    def blocked(x: float, z: float) -> bool:
+        return any(
+            abs(s.at(x)[1] - z) < (s.dia + dia) / 2 - 0.05
+            for s in strands
+            if s.covers(x) or s.covers(x - dia) or s.covers(x + dia)
+        )
+
+    def near(x: float, z: float) -> float | None:
+        free = [g for g in between if abs(g - x) < REACH and not blocked(g, z)]
+        return min(free, key=lambda g: (abs(g - x), g), default=None)
+
+    return near
 
 
-def _thinned(xs: list[float], pitch: float) -> list[float]:
-    """Drop places that stand within a fifth of the pitch of the one before."""
-    kept: list[float] = []
-    for x in xs:
-        if not kept or x - kept[-1] > pitch / 5:
-            kept.append(x)
-    return kept
+def _places(
+    held: list[Strand],
+    z: float,
+    near: Callable[[float, float], float | None],
+    pitch: float,
+) -> list[float]:
+    """Return where spacers stand under the bars they hold."""
+    found: list[float] = []
+    for s in held:
+        x0, x1 = s.x0 + 100, s.x1 - 100
+        count = max(2, int((x1 - x0) // pitch) + 2)
+        for k in range(count):
+            x = x0 + (x1 - x0) * k / (count - 1)
+            if any(abs(x - other) < pitch / 4 for other in found):
+                continue
+            place = near(x, z)
+            if place is not None and s.x0 <= place <= s.x1 and place not in found:
+                found.append(place)
+    return sorted(found)
 
 
 def _by_span(beam: Beam, xs: list[float]) -> dict[int, list[float]]:

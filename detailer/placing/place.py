@@ -11,11 +11,11 @@ from detailer.cage.bar import Bar, Cage
 from detailer.cage.contacts import corner_contacts
 from detailer.model import Beam, Project
 from detailer.placing import contacts
-from detailer.placing.asides import settle
+from detailer.placing.asides import Settling, settle
 from detailer.placing.concrete import prisms_of, rests_of
 from detailer.placing.demand import Demand
 from detailer.placing.ends import development
-from detailer.placing.frame import frame_of
+from detailer.placing.frame import Frame, common, frame_of
 from detailer.placing.laps import Lapping, lapped
 from detailer.placing.links import LinkRow, link_bars, stations
 from detailer.placing.others import SIDE_INTO_SUPPORT, side_strands, spacer_bars
@@ -49,7 +49,7 @@ def place(project: Project, beam: Beam, envelope: Envelope | None) -> Cage:
     sides = tuple(
         side_strands(project, beam, frames, strands, _side_anchorage(project, beam, demand))
     )
-    strands = (*strands, *_settled_sides(project, sides))
+    strands = (*strands, *settle(sides, _settling(project, beam, frozenset())))
     rows = _link_rows(project, beam)
     links = tuple(
         bar
@@ -91,7 +91,17 @@ def _strands(project: Project, beam: Beam, demand: Demand | None) -> tuple[Stran
         others = tuple(s for s in raw if s.run != item.index and s.face is item.run.face)
         lapping = Lapping(project=project, beam=beam, demand=demand, seated=item, others=others)
         pieces += [piece for line in lapped(mine, lapping) for piece in line]
-    return settle(project, pieces, _seated_together(seated))
+    return settle(pieces, _settling(project, beam, _seated_together(seated)))
+
+
+def _settling(project: Project, beam: Beam, together: frozenset[tuple[int, int]]) -> Settling:
+    """Return what decides whether bars may lie where they lie."""
+
+    def room(x0: float, x1: float) -> Frame:
+        frames = [frame_of(beam, span) for span in beam.spans if span.x0 <= x1 and span.x1 >= x0]
+        return common(frames or [frame_of(beam, beam.span_at(x0))])
+
+    return Settling(aggregate=project.concrete.aggregate, room=room, together=together)
 
 
 def _seated_together(seated: tuple[Seated, ...]) -> frozenset[tuple[int, int]]:
@@ -110,10 +120,6 @@ def _side_anchorage(project: Project, beam: Beam, demand: Demand | None) -> floa
     xs = np.linspace(beam.start, beam.end, 50)
     twisted = any(demand.envelope.torsion(float(x)) > 0 for x in xs)
     return development(project, max(sizes)) if twisted else SIDE_INTO_SUPPORT
-
-
-def _settled_sides(project: Project, sides: tuple[Strand, ...]) -> tuple[Strand, ...]:
-    return settle(project, sides, frozenset())
 
 
 def _link_rows(project: Project, beam: Beam) -> dict[int, tuple[LinkRow, ...]]:
