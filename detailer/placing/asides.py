@@ -96,14 +96,20 @@ def _share(a: Strand, b: Strand) -> float:
 
 def _clear(a: Strand, b: Strand) -> float:
     """Return the least clear distance of two strands where both are."""
+    if a.aside == b.aside == (0.0, 0.0):
+        return hypot(a.y - b.y, a.z - b.z) - (a.dia + b.dia) / 2
     x0, x1 = max(a.x0, b.x0), min(a.x1, b.x1)
     xs = {x0, x1}
     for s in (a, b):
-        if s.crank:
-            steps = (s.aside_to + k * s.crank / 4 for k in range(5))
+        length = s.crank
+        if length:
+            steps = (s.aside_to + k * length / 4 for k in range(5))
             xs |= {x for x in steps if x0 <= x <= x1}
-    touch = (a.dia + b.dia) / 2
-    return min(hypot(a.at(x)[0] - b.at(x)[0], a.at(x)[1] - b.at(x)[1]) for x in xs) - touch
+    least = float("inf")
+    for x in xs:
+        (ya, za), (yb, zb) = a.at(x), b.at(x)
+        least = min(least, hypot(ya - yb, za - zb))
+    return least - (a.dia + b.dia) / 2
 
 
 def _give_way(strand: Strand, rivals: list[Strand], settling: Settling) -> Strand:
@@ -135,9 +141,9 @@ def _counted(way: Strand, rivals: list[Strand], settling: Settling) -> Iterator[
     Left out are bars of its own seating while neither has moved, and bars beyond one that it
     touches and that they touch too: these make one group.
     """
-    touched = [o for o in rivals if abs(_clear(way, o)) < TOUCH]
-    for other in rivals:
-        clear = _clear(way, other)
+    apart = [_clear(way, o) for o in rivals]
+    touched = [o for o, clear in zip(rivals, apart, strict=True) if abs(clear) < TOUCH]
+    for other, clear in zip(rivals, apart, strict=True):
         unmoved = way.aside == (0.0, 0.0) and other.aside == (0.0, 0.0)
         if unmoved and settling.sat_together(way, other) and clear > 1.0:
             continue

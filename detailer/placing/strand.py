@@ -51,8 +51,10 @@ class Strand:
 
     def at(self, x: float) -> tuple[float, float]:
         """Return (y, z) of the centre line at x, bends of ends left out."""
+        if self.aside == (0.0, 0.0):
+            return self.y, self.z
         length = self.crank
-        if not length or x >= self.aside_to + length:
+        if x >= self.aside_to + length:
             return self.y, self.z
         share = min(1.0, (self.aside_to + length - x) / length)
         return self.y + share * self.aside[0], self.z + share * self.aside[1]
