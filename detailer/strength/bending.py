@@ -2,8 +2,9 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Sequence
-from dataclasses import dataclass
+from collections.abc import Sequence
+from dataclasses import dataclass, replace
+from math import inf
 from typing import NamedTuple
 
 from detailer.rules import is456
@@ -11,6 +12,9 @@ from detailer.strength.section import Gross
 
 CLOSE = 1e-10
 """Forces that differ by this share are in balance."""
+
+LEVEL = 1e-6
+"""Steel no higher than this above the centroid lies at its level. [mm]"""
 
 
 class Row(NamedTuple):
@@ -39,9 +43,10 @@ def resistance(
 ) -> Resistance:
     """Return the moment of resistance of a section.
 
-    Steel in the tension half carries its limit stress at its own level; the neutral axis
-    stays within xu,max. Steel in the compression half counts only where the concrete alone
-    is not enough, at the stress its strain gives.
+    Steel in the tension half carries its limit stress, and where it lies higher than the centroid
+    no more than its strain gives; the neutral axis stays within xu,max of that centroid. Steel in
+    the compression half counts only where the concrete alone is not enough, at the stress its
+    strain gives.
 
     Parameters
     ----------
@@ -58,78 +63,108 @@ def resistance(
 
     References
     ----------
-    .. [1] IS 456:2000, G-1.1, G-1.2, G-2.2, G-2.3.
+    .. [1] IS 456:2000, G-1.1, G-1.2, G-2.2, G-2.3; 38.1 for the strains.
     """
-
-    def level(row: Row) -> float:
-        return gross.top - row.z if sagging else row.z - gross.soffit
-
-    tension = [(level(r), r.area * r.limit_stress) for r in rows if level(r) > gross.depth / 2]
-    pull = sum(force for _, force in tension)
-    if pull <= 0:
+    levels = [(gross.top - r.z if sagging else r.z - gross.soffit, r) for r in rows]
+    pulled = [(at, r) for at, r in levels if at > gross.depth / 2 and r.limit_stress > 0]
+    if not pulled:
         return Resistance(
             moment=0.0, d=0.0, xu=0.0, xu_limit=0.0, compression_used=False, over_reinforced=False
         )
-    d = sum(at * force for at, force in tension) / pull
-    limit = is456.xu_limit(fy) * d
-    block = _Block(gross, fck, sagging)
-    concrete, arm = block.force(limit)
-    if concrete >= pull:
-        xu = _balance(lambda x: block.force(x)[0], pull, limit)
-        force, arm = block.force(xu)
-        return _result(pull * d - force * arm, d, xu, limit)
-    pressed = [(level(r), r) for r in rows if level(r) <= gross.depth / 2]
-
-    def push(x: float) -> list[tuple[float, float]]:
-        return [
-            (at, r.area * _compressed(x, at, fy, r.limit_stress)) for at, r in pressed if at < x
-        ]
-
-    def total(x: float) -> float:
-        return block.force(x)[0] + sum(force for _, force in push(x))
-
-    over = total(limit) < pull
-    xu = limit if over else _balance(total, pull, limit)
-    concrete, arm = block.force(xu)
-    moment = concrete * (d - arm) + sum(force * (d - at) for at, force in push(xu))
-    used = any(force > 0 for _, force in push(xu))
-    return _result(moment, d, xu, limit, used=used, over=over)
+    section = _section(_Block(gross, fck, sagging), pulled, fy)
+    limit = is456.xu_limit(fy) * section.d
+    if section.excess(limit) < 0:
+        section = replace(section, pressed=tuple((at, r) for at, r in levels if at < limit))
+    over = section.excess(limit) < 0
+    return section.at(limit if over else _balance(section, limit), limit, over=over)
 
 
-def _result(
-    moment: float, d: float, xu: float, limit: float, *, used: bool = False, over: bool = False
-) -> Resistance:
-    return Resistance(
-        moment=moment, d=d, xu=xu, xu_limit=limit, compression_used=used, over_reinforced=over
+def _section(block: _Block, pulled: list[tuple[float, Row]], fy: float) -> _Section:
+    """Return the section without steel in compression."""
+    pull = sum(r.area * r.limit_stress for _, r in pulled)
+    d = sum(at * r.area * r.limit_stress for at, r in pulled) / pull
+    upper = tuple((at, r) for at, r in pulled if at < d - LEVEL)
+    share = is456.CONCRETE_STRAIN / (is456.CONCRETE_STRAIN + is456.yield_strain(fy))
+    return _Section(
+        block=block,
+        lower=tuple((at, r.area * r.limit_stress) for at, r in pulled if at >= d - LEVEL),
+        upper=upper,
+        pressed=(),
+        fy=fy,
+        d=d,
+        pull=pull,
+        yielding=share * min((at for at, _ in upper), default=inf),
     )
 
 
-def _compressed(xu: float, at: float, fy: float, limit: float) -> float:
-    """Return the stress of steel at a depth in the compression zone. [N/mm²]"""
-    strain = is456.CONCRETE_STRAIN * (xu - at) / xu
-    return min(is456.steel_stress(strain, fy), limit)
-
-
-def _balance(force: Callable[[float], float], pull: float, high: float) -> float:
-    """Return the depth at which a growing force reaches the pull, by false position."""
-    low, below, above = 0.0, 0.0, force(high)
+def _balance(section: _Section, high: float) -> float:
+    """Return the depth at which compression meets tension, by false position."""
+    low, below, above = 0.0, -section.pull, section.excess(high)
     side = 0
     for _ in range(80):
-        middle = low + (pull - below) * (high - low) / (above - below)
-        here = force(middle)
-        if abs(here - pull) <= CLOSE * pull:
+        middle = low - below * (high - low) / (above - below)
+        here = section.excess(middle)
+        if abs(here) <= CLOSE * section.pull:
             return middle
-        if here < pull:
+        if here < 0:
             low, below = middle, here
             if side < 0:
-                above = pull + (above - pull) / 2
+                above /= 2
             side = -1
         else:
             high, above = middle, here
             if side > 0:
-                below = pull + (below - pull) / 2
+                below /= 2
             side = 1
     return high
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class _Section:
+    """Concrete and steel whose forces balance at some neutral axis."""
+
+    block: _Block
+    lower: tuple[tuple[float, float], ...]  # depth and force of steel below the centroid [mm, N]
+    upper: tuple[tuple[float, Row], ...]  # depth and steel above it
+    pressed: tuple[tuple[float, Row], ...]
+    fy: float
+    d: float  # of the steel in tension, all at its limit [mm]
+    pull: float  # likewise [N]
+    yielding: float  # neutral axis down to which all of it is at its limit [mm]
+
+    def tension(self, xu: float) -> list[tuple[float, float]]:
+        """Return depth and force of the steel in tension. [mm, N]"""
+        return [*self.lower, *((at, self._force(xu, at, r)) for at, r in self.upper if at > xu)]
+
+    def compression(self, xu: float) -> list[tuple[float, float]]:
+        """Return depth and force of the steel in compression. [mm, N]"""
+        return [(at, self._force(xu, at, r)) for at, r in self.pressed if at < xu]
+
+    def _force(self, xu: float, at: float, row: Row) -> float:
+        """Return the force of steel by its strain, unsigned. [N]"""
+        strain = is456.CONCRETE_STRAIN * abs(at - xu) / xu
+        return row.area * min(is456.steel_stress(strain, self.fy), row.limit_stress)
+
+    def excess(self, xu: float) -> float:
+        """Return compression less tension. [N]"""
+        push = self.block.force(xu)[0] + sum(force for _, force in self.compression(xu))
+        if xu <= self.yielding:
+            return push - self.pull
+        return push - sum(force for _, force in self.tension(xu))
+
+    def at(self, xu: float, limit: float, *, over: bool) -> Resistance:
+        """Return what it carries at a neutral axis."""
+        pull, push = self.tension(xu), self.compression(xu)
+        d = sum(at * force for at, force in pull) / sum(force for _, force in pull)
+        concrete, arm = self.block.force(xu)
+        return Resistance(
+            moment=concrete * (d - arm) + sum(force * (d - at) for at, force in push),
+            d=d,
+            xu=xu,
+            xu_limit=limit,
+            compression_used=any(force > 0 for _, force in push),
+            over_reinforced=over,
+        )
 
 
 @dataclass(frozen=True, slots=True)

@@ -83,6 +83,7 @@ from detailer.rules.is456.flexure import (
     rectangle_steel,
     steel_stress,
     xu_limit,
+    yield_strain,
 )
 from detailer.rules.is456.laps import (
     LAP_MAX_DIA,
@@ -254,4 +255,5 @@ __all__ = [
     "torsion_moments",
     "torsion_shear",
     "xu_limit",
+    "yield_strain",
 ]

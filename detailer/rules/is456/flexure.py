@@ -33,6 +33,21 @@ FROM MEMORY (page_seen=False).
 """
 
 
+def yield_strain(fy: float) -> float:
+    """Return the strain that tension steel reaches at least when the section fails. [-]
+
+    Parameters
+    ----------
+    fy : float
+        Characteristic strength. [N/mm²]
+
+    References
+    ----------
+    .. [1] IS 456:2000, 38.1 f (derived from the printed limits of the neutral axis).
+    """
+    return 0.002 + DESIGN_SHARE * fy / STEEL_MODULUS
+
+
 def xu_limit(fy: float) -> float:
     """Return the greatest depth of the neutral axis over the effective depth. [-]
 
@@ -47,7 +62,9 @@ def xu_limit(fy: float) -> float:
        0.0035/(0.0055 + 0.87 fy/Es) (derived).
     """
     printed = XU_LIMIT.get(round(fy))
-    return printed if printed is not None else 0.0035 / (0.0055 + 0.87 * fy / STEEL_MODULUS)
+    if printed is not None:
+        return printed
+    return CONCRETE_STRAIN / (CONCRETE_STRAIN + yield_strain(fy))
 
 
 def steel_stress(strain: float, fy: float) -> float:
