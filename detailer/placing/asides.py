@@ -9,7 +9,10 @@ from typing import NamedTuple
 
 from detailer.placing.frame import Frame, gap_needed
 from detailer.placing.strand import Strand
-from detailer.values import Face
+from detailer.values import EndForm, Face
+
+LEG_CLEAR = 2.0
+"""A leg passes another bar by at least this. [mm]"""
 
 NEAR = 25.0
 """Ends in one line closer than this count as meeting. [mm]"""
@@ -19,6 +22,9 @@ OVERLAP = 50.0
 
 TOUCH = 0.2
 """Bars this close lie against each other. [mm]"""
+
+BEND = 22.0
+"""A crank starts so far past the end it passes, so that its bend spares the lap. [mm]"""
 
 TAIL = 400.0
 """A bar must go on this far past those it passes before it can crank back. [mm]"""
@@ -39,9 +45,14 @@ class Settling:
 
     def lack(self, a: Strand, b: Strand) -> float:
         """Return how much two bars lack to the distance they need; 0 where they touch."""
+        crossed = max(_leg_across(a, b), _leg_across(b, a))
+        if crossed > 0:
+            return 100.0 + crossed
+        if _share(a, b) <= -NEAR:
+            return 0.0
         clear = _clear(a, b)
         if abs(clear) < TOUCH:
-            return 0.0
+            return 0.0 if _share(a, b) > NEAR else 5.0
         if clear < 0:
             return 100.0 - clear
         if a.layer != b.layer:
@@ -84,7 +95,7 @@ def settle(strands: Iterable[Strand], settling: Settling) -> tuple[Strand, ...]:
     """
     done: list[Strand] = []
     for strand in sorted(strands, key=lambda s: (s.face.value, s.x0, s.layer, s.y, s.run)):
-        rivals = [o for o in done if o.face is strand.face and _share(o, strand) > -NEAR]
+        rivals = [o for o in done if o.face is strand.face and _share(o, strand) > -2 * NEAR]
         done.append(_give_way(strand, rivals, settling))
     return tuple(done)
 
@@ -110,6 +121,21 @@ def _clear(a: Strand, b: Strand) -> float:
         (ya, za), (yb, zb) = a.at(x), b.at(x)
         least = min(least, hypot(ya - yb, za - zb))
     return least - (a.dia + b.dia) / 2
+
+
+def _leg_across(bent: Strand, other: Strand) -> float:
+    """Return how deep a leg of one bar cuts into another bar that passes it. [mm]"""
+    into = -1.0 if bent.face is Face.TOP else 1.0
+    worst = 0.0
+    for end, axis in ((bent.left, bent.x0 + bent.dia / 2), (bent.right, bent.x1 - bent.dia / 2)):
+        if end.form is EndForm.STRAIGHT or not other.x0 - bent.dia < axis < other.x1 + bent.dia:
+            continue
+        (y, z), (oy, oz) = bent.at(axis), other.at(axis)
+        touch = (bent.dia + other.dia) / 2
+        along = (oz - z) * into
+        if touch < along < max(end.leg, 10 * bent.dia) + other.dia / 2:
+            worst = max(worst, touch + LEG_CLEAR - abs(oy - y))
+    return worst
 
 
 def _give_way(strand: Strand, rivals: list[Strand], settling: Settling) -> Strand:
@@ -168,7 +194,7 @@ def _ways(
     for y, z in _places(strand, window, start, settling):
         offset = (y - strand.y, z - strand.z)
         if tail_only and _inside(near, y, z, strand.dia):
-            yield replace(strand, aside=offset, aside_to=meet + 10)
+            yield replace(strand, aside=offset, aside_to=meet + BEND)
         if not strand.corner and _inside(whole_room, y, z, strand.dia):
             yield replace(strand.moved(*offset), aside=(0.0, 0.0), aside_to=0.0)
     if strand.corner and not tail_only:
@@ -190,7 +216,7 @@ def _places(
         flat = touch**2 - (strand.z - oz) ** 2
         side = -1.0 if oy > 0 else 1.0
         clear = touch + settling.need(strand, other) + 0.1
-        for reach in (sqrt(flat) if flat > 0 else 0.0, clear):
+        for reach in (sqrt(flat) if flat > 0 else touch + LEG_CLEAR, clear):
             if reach > 0:
                 yield oy + side * reach, strand.z
                 yield oy - side * reach, strand.z

@@ -10,6 +10,9 @@ from detailer.cage.bar import Bar, Contact
 from detailer.placing.strand import Strand
 from detailer.values import ContactKind
 
+BEND = 20.0
+"""The bend of a crank takes up no more than this of the straight before it. [mm]"""
+
 TOUCHING = 0.3
 """Surfaces this close are meant to touch. [mm]"""
 
@@ -38,7 +41,13 @@ def _touching(a: Strand, b: Strand) -> tuple[float, float] | None:
     edges = {x0, x1}
     for s in (a, b):
         if s.crank:
-            edges |= {x for x in (s.aside_to, s.aside_to + s.crank) if x0 < x < x1}
+            bent = (
+                s.aside_to - BEND,
+                s.aside_to,
+                s.aside_to + s.crank,
+                s.aside_to + s.crank + BEND,
+            )
+            edges |= {x for x in bent if x0 < x < x1}
     order = sorted(edges)
     for low, high in itertools.pairwise(order):
         if high - low < 1.0:

@@ -20,6 +20,7 @@ class Room:
 
     past_face: float  # from the inner face to the outermost point a bar may reach
     drop: float  # longest leg, outside to outside, that stays within the beam
+    capped: bool  # whether no leg may be longer, needed or not
 
 
 def far_clear(beam: Beam, support: int) -> float:
@@ -96,6 +97,6 @@ def end_for(
     if not fits:
         short = room.drop // step * step
         kept = straight + bend + short - radius - dia - standard
-        if short >= bend_leg(dia, standard, step) and kept >= least:
+        if short >= bend_leg(dia, standard, step) and (kept >= least or room.capped):
             leg = short
     return room.past_face, End(EndForm.BEND, leg)

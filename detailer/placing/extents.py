@@ -174,7 +174,7 @@ def end_room(run: Run, around: Around, span: Span, side: int, support: int) -> R
     else:
         drop = (span.top - beam.cover.top) - (z - dia / 2) - OTHER_FACE
     past = at.width - far_clear(beam, support) - around.setback[0 if side < 0 else 1]
-    return Room(past_face=past, drop=drop)
+    return Room(past_face=past, drop=drop, capped=run.face is not Face.TOP)
 
 
 def _stress_share(run: Run, around: Around, span: Span, side: int) -> float:

@@ -19,7 +19,7 @@ from detailer.placing.frame import Frame, common, frame_of
 from detailer.placing.laps import Lapping, lapped
 from detailer.placing.links import LinkRow, link_bars, stations
 from detailer.placing.others import SIDE_INTO_SUPPORT, side_strands, spacer_bars
-from detailer.placing.seating import Seated, seat_all, spacer_dia, strands_of
+from detailer.placing.seating import Seated, seat_all, strands_of
 from detailer.placing.strand import Strand, path
 from detailer.statics import Envelope
 from detailer.values import Face
@@ -45,7 +45,8 @@ def place(project: Project, beam: Beam, envelope: Envelope | None) -> Cage:
     """
     demand = Demand(project, beam, envelope) if envelope is not None else None
     frames = {span.number: frame_of(beam, span) for span in beam.spans}
-    strands = _strands(project, beam, demand)
+    seated, spacer = seat_all(project, beam, demand)
+    strands = _strands(project, beam, demand, seated)
     sides = tuple(
         side_strands(project, beam, frames, strands, _side_anchorage(project, beam, demand))
     )
@@ -57,7 +58,7 @@ def place(project: Project, beam: Beam, envelope: Envelope | None) -> Cage:
         for bar in link_bars(frame, rows[number], strands, project.steel.links.name)
     )
     xs = tuple(sorted(x for group in rows.values() for row in group for x in row.xs))
-    spacers = tuple(spacer_bars(project, beam, frames, strands, xs, spacer_dia(project, beam)))
+    spacers = tuple(spacer_bars(project, beam, frames, strands, xs, spacer))
     pairs, bars = _bars(project, strands)
     cover = beam.cover
     cage = Cage(
@@ -81,9 +82,10 @@ def place(project: Project, beam: Beam, envelope: Envelope | None) -> Cage:
     return replace(cage, contacts=tuple(order))
 
 
-def _strands(project: Project, beam: Beam, demand: Demand | None) -> tuple[Strand, ...]:
+def _strands(
+    project: Project, beam: Beam, demand: Demand | None, seated: tuple[Seated, ...]
+) -> tuple[Strand, ...]:
     """Return the bars of top and bottom, lapped where needed, out of each other's way."""
-    seated = seat_all(project, beam, demand)
     raw = tuple(strands_of(project, seated))
     pieces: list[Strand] = []
     for item in seated:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from dataclasses import dataclass, replace
+from math import sqrt
 
 from detailer.model import Beam, Project
 from detailer.placing.demand import Demand, area
@@ -12,7 +13,7 @@ from detailer.placing.frame import Frame, common, frame_of
 from detailer.placing.lanes import Seat, Spacing, seat_extras, seat_primary
 from detailer.placing.runs import Run, runs_of
 from detailer.placing.strand import Strand
-from detailer.rules import is456
+from detailer.rules import is456, is2502
 from detailer.values import EndForm, Face, Role
 
 
@@ -33,17 +34,8 @@ class Seated:
         return tuple((float(s.dia), self.frame.level(face, s.depth)) for s in self.seats)
 
 
-def spacing_of(project: Project, beam: Beam) -> Spacing:
-    """Return what decides how close the bars of a beam may lie.
-
-    Layers are held apart by spacer bars, so the gap between them is the spacer's size: the
-    smallest size held that is at least the code's gap and the office's spacer.
-    """
-    return Spacing(aggregate=project.concrete.aggregate, layer_gap=float(spacer_dia(project, beam)))
-
-
-def spacer_dia(project: Project, beam: Beam) -> int:
-    """Return the diameter of spacer bars between layers. [mm]
+def spacer_dia(project: Project, beam: Beam, *, past_hooks: bool = False) -> int:
+    """Return the diameter of spacer bars between layers, which is the gap they hold. [mm]
 
     Parameters
     ----------
@@ -51,15 +43,29 @@ def spacer_dia(project: Project, beam: Beam) -> int:
         Its sizes and practice.
     beam : Beam
         Its largest bar decides the code's gap.
+    past_hooks : bool
+        Whether the tails of hooks must pass between a corner bar and the layer above it:
+        where both faces have a second layer no corner is free of them.
     """
     largest = max((g.dia for bars in beam.bars for g in bars.groups), default=0)
     code = is456.min_layer_gap(largest, project.concrete.aggregate).value
     given = project.practice.layer_gap
     need = given if given is not None else max(code, float(project.practice.spacer_size))
-    return next((d for d in sorted(project.steel.sizes) if d >= need - 1e-6), round(need))
+    if past_hooks and given is None:
+        need = max(need, _gap_for_tails(beam))
+    held = sorted(project.steel.sizes)
+    return next((d for d in held if d >= need - 1e-6), held[-1])
 
 
-def seat_all(project: Project, beam: Beam, demand: Demand | None) -> tuple[Seated, ...]:
+def _gap_for_tails(beam: Beam) -> float:
+    """Return the gap between layers that lets the 45° tail of a hook pass. [mm]"""
+    sizes = [group.dia for bars in beam.bars for group in bars.groups]
+    link = max(zone.dia for links in beam.links for zone in links.zones)
+    bend = max(is2502.bend_radius(link, link=True), max(sizes) / 2)
+    return sqrt(2) * (bend + link + max(sizes) / 2) - min(sizes) + 0.1
+
+
+def seat_all(project: Project, beam: Beam, demand: Demand | None) -> tuple[tuple[Seated, ...], int]:
     """Seat every run of a beam and find where it starts and stops.
 
     Parameters
@@ -68,10 +74,26 @@ def seat_all(project: Project, beam: Beam, demand: Demand | None) -> tuple[Seate
         What is to be placed.
     demand : Demand or None
         None where the beam carries no results.
+
+    Returns
+    -------
+    seated, spacer
+        The runs, and the diameter of the bars that hold layers apart. [mm]
     """
+    spacer = spacer_dia(project, beam)
+    seated = _seated(project, beam, demand, spacer)
+    layered = {s.run.face for s in seated for seat in s.seats if seat.layer > 1}
+    wider = spacer_dia(project, beam, past_hooks=True)
+    if len(layered) > 1 and wider > spacer:
+        return _seated(project, beam, demand, wider), wider
+    return seated, spacer
+
+
+def _seated(project: Project, beam: Beam, demand: Demand | None, spacer: int) -> tuple[Seated, ...]:
+    """Return the runs with their places and extents, layers held apart by a spacer."""
     runs = [run for run in runs_of(beam) if run.face in (Face.TOP, Face.BOTTOM)]
     done: list[Seated] = []
-    spacing = spacing_of(project, beam)
+    spacing = Spacing(aggregate=project.concrete.aggregate, layer_gap=float(spacer))
     order = sorted(
         range(len(runs)), key=lambda i: (runs[i].face is Face.BOTTOM, not runs[i].primary, i)
     )
