@@ -17,6 +17,7 @@ from detailer.output.files import Batch, safe_names, whole
 from detailer.placing import place
 from detailer.schedule import Row, number, rows, summarise
 from detailer.statics import Envelope, envelope
+from detailer.strength.slices import Steel
 from detailer.values import CAUTION
 
 Progress: TypeAlias = Callable[[str, int, int], None]
@@ -78,15 +79,16 @@ def findings_of(made: Placed, progress: Progress = quiet) -> tuple[Finding, ...]
     found: list[Finding] = []
     for n, beam in enumerate(made.project.beams):
         progress(f"checking {beam.mark}", n + 1, len(made.project.beams))
-        found += run(
-            Case(
-                project=made.project,
-                beam=beam,
-                envelope=made.envelopes[n],
-                cage=made.cages[n],
-            )
-        )
+        found += run(_case(made, n))
     return ordered(found)
+
+
+def _case(made: Placed, n: int) -> Case:
+    """Return one beam as the checks see it."""
+    project = made.project
+    return Case(
+        project=project, beam=project.beams[n], envelope=made.envelopes[n], cage=made.cages[n]
+    )
 
 
 def write(
@@ -104,12 +106,16 @@ def write(
         Told of each beam.
     """
     made = placed(project, progress)
-    found = findings_of(made, progress)
+    every: list[Finding] = []
     with whole(target) as batch:
         stems = safe_names(tuple(beam.mark for beam in project.beams))
         for n, stem in enumerate(stems):
-            progress(f"drawing {project.beams[n].mark}", n + 1, len(stems))
-            _draw(batch, made, n, stem, found)
+            progress(f"checking and drawing {project.beams[n].mark}", n + 1, len(stems))
+            case = _case(made, n)
+            mine = run(case)
+            _draw(batch, made, n, stem, mine, case.steel)
+            every += mine
+        found = ordered(every)
         batch.write("schedule.csv", csv.schedule(made.rows))
         summary = summarise(made.cages, made.rows)
         batch.write("summary.csv", csv.summary(summary))
@@ -138,7 +144,9 @@ def write(
     return names, found
 
 
-def _draw(batch: Batch, made: Placed, n: int, stem: str, found: tuple[Finding, ...]) -> None:
+def _draw(
+    batch: Batch, made: Placed, n: int, stem: str, found: tuple[Finding, ...], steel: Steel
+) -> None:
     """Write the drawing of one beam; nothing of it is kept."""
     from detailer.output.dxf import dxf_bytes
     from detailer.output.svg import svg_text
@@ -153,6 +161,7 @@ def _draw(batch: Batch, made: Placed, n: int, stem: str, found: tuple[Finding, .
         found,
         made.rows,
         assumptions=project.assumptions,
+        steel=steel,
     )
     date = project.issue.date
     batch.write(f"drawings/{stem}.dxf", dxf_bytes(drawing, caution=CAUTION, date=date))

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from math import pi
 
 import numpy as np
@@ -38,6 +38,7 @@ class Steel:
     cage: Cage
     bars: tuple[Rod, ...]
     shapes: dict[int, Gross]
+    known: dict[tuple[object, ...], Resistance] = field(default_factory=dict)  # slices met before
 
     def at(self, x: float, face: Face) -> tuple[Rod, ...]:
         """Return the bars of a face at x.
@@ -103,21 +104,20 @@ class Steel:
             table = shares(self.project, self.cage, bars, xs)
         stress = np.round(table.reshape(len(bars), len(xs)).T * (0.87 * steel.fy), 1)
         level = np.round(np.array([b.levels(xs) for b in bars]).reshape(len(bars), len(xs)).T, 2)
-        seen: dict[tuple[int, bytes, bytes], Resistance] = {}
         result = []
         for k, x in enumerate(xs.tolist()):
             number = (span or self.beam.span_at(x)).number
-            key = (number, stress[k].tobytes(), level[k].tobytes())
-            if key not in seen:
+            key = (number, sagging, without, stress[k].tobytes(), level[k].tobytes())
+            if key not in self.known:
                 rows = tuple(
                     Row(b.dia, area(b.dia), z, s)
                     for b, z, s in zip(bars, level[k].tolist(), stress[k].tolist(), strict=True)
                     if s > 0
                 )
-                seen[key] = resistance(
+                self.known[key] = resistance(
                     self.shapes[number], rows, concrete.fck, steel.fy, sagging=sagging
                 )
-            result.append(seen[key])
+            result.append(self.known[key])
         return result
 
     def moment(self, x: float, *, sagging: bool, full: bool = False) -> Resistance:

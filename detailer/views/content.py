@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass
 from functools import cached_property
+from types import MappingProxyType
 
 from detailer.cage.bar import Cage
 from detailer.drawing.primitives import XY, View
@@ -32,6 +33,9 @@ DOUBT = (6.0, 15.0)
 
 DOUBT_ABOUT_SECTIONS = 1.0
 """The same for the width of a section. [mm on paper]"""
+
+FIRST = MappingProxyType({"stack": 25.0})
+"""The scale at which views of a kind are judged while none are made: the likeliest."""
 
 LOWER = (Face.BOTTOM, Face.LEFT, Face.RIGHT)
 
@@ -120,7 +124,9 @@ class Content:
     def _known(self, kind: str, scale: float) -> float:
         """Return the scale at which views of a kind are made: this one or the first one made."""
         made = [known for what, known in self._made if what == kind]
-        return made[0] if made and scale not in made else scale
+        if scale in made:
+            return scale
+        return made[0] if made else FIRST.get(kind, scale)
 
 
 def _stack(content: Content, scale: float) -> Iterator[View]:

@@ -4,26 +4,25 @@ from __future__ import annotations
 
 import numpy as np
 
-from detailer.cage.bar import Cage
-from detailer.model import Beam, Project
+from detailer.model import Beam
 from detailer.statics import Envelope
-from detailer.strength.slices import steel_of
+from detailer.strength.slices import Steel
 from detailer.views.diagram import Curves
 
 STEP = 50.0
 """Between two places at which moments are taken. [mm]"""
 
 
-def curves_of(project: Project, beam: Beam, envelope: Envelope | None, cage: Cage) -> Curves | None:
+def curves_of(beam: Beam, envelope: Envelope | None, steel: Steel) -> Curves | None:
     """Return what the moment diagram shows; None without design results.
 
     Parameters
     ----------
-    project, beam : Project, Beam
+    beam : Beam
         What was asked.
     envelope : Envelope or None
         What the design asks for.
-    cage : Cage
+    steel : Steel
         What was placed: each bar resists with the stress it develops.
     """
     if envelope is None:
@@ -31,7 +30,6 @@ def curves_of(project: Project, beam: Beam, envelope: Envelope | None, cage: Cag
     xs = np.concatenate([envelope.sample(span, STEP) for span in beam.spans])
     least, most = envelope.moments(xs)
     at = np.unique(xs)
-    steel = steel_of(project, beam, cage)
     sagging, hogging = (
         tuple(r.moment for r in steel.profile(at, sagging=sense)) for sense in (True, False)
     )

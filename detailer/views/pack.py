@@ -131,10 +131,12 @@ def _rest(
     """Return places of blocks in what is free, the first order of them that fits."""
     if not blocks:
         return {}
-    for block in blocks:
-        place = _first(free, choices[block])
+    places = {block: _first(free, choices[block]) for block in blocks}
+    if None in places.values():
+        return None  # what does not fit now fits no better later
+    for block, place in places.items():
         if place is None:
-            return None  # what does not fit now fits no better later
+            continue
         size = choices[block][place[0]]
         x, y = place[1]
         taken = Room(x - GAP, y - size[1] - GAP, x + size[0] + GAP, y + GAP)

@@ -12,6 +12,7 @@ from detailer.findings import Finding
 from detailer.model import Assumption, Beam, Project
 from detailer.schedule.rows import Row as ScheduleRow
 from detailer.statics import Envelope
+from detailer.strength.slices import Steel, steel_of
 from detailer.views.content import Content, size_of, stack_size
 from detailer.views.cuts import Cut, cuts_of
 from detailer.views.demand import curves_of
@@ -51,6 +52,7 @@ def beam_drawing(
     rows: tuple[ScheduleRow, ...],
     *,
     assumptions: tuple[Assumption, ...],
+    steel: Steel | None = None,
 ) -> Drawing:
     """Return the drawing of a beam: one sheet, on the smallest paper that holds it.
 
@@ -68,6 +70,8 @@ def beam_drawing(
         The schedule, of any members.
     assumptions : tuple of Assumption
         Of the project and any members.
+    steel : Steel, optional
+        The steel of the cage, where it has been looked at already.
     """
     clear = clear_spans(cage)
     cuts = cuts_of(cage, clear)
@@ -76,7 +80,7 @@ def beam_drawing(
         beam=beam,
         cage=cage,
         cuts=cuts,
-        curves=curves_of(project, beam, envelope, cage),
+        curves=curves_of(beam, envelope, steel or steel_of(project, beam, cage)),
         notes=notes_of(project, beam, cage, strands, findings, assumptions),
         table=table_of(cage, rows),
     )
