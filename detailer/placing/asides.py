@@ -4,9 +4,11 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterable, Iterator
 from dataclasses import dataclass, replace
+from itertools import pairwise
 from math import hypot, sqrt
 from typing import NamedTuple
 
+from detailer.model import over_ribs
 from detailer.placing.frame import Frame, gap_needed
 from detailer.placing.strand import Strand
 from detailer.values import EndForm, Face
@@ -123,6 +125,33 @@ def _clear(a: Strand, b: Strand) -> float:
     return least - (a.dia + b.dia) / 2
 
 
+def _rib_lack(way: Strand, rivals: list[Strand], settling: Settling) -> float:
+    """Return how much a layer packed over ribs lacks where a bar starts. [mm]
+
+    What ribs of bars and links take is shared by the gaps between groups of touching bars.
+    """
+    x = way.x0 + 1.0
+    row = [o for o in rivals if o.layer == way.layer and o.covers(x)]
+    spots = sorted((*o.at(x), o.dia) for o in (*row, way))
+    groups: list[list[tuple[float, float, float]]] = []
+    for spot in spots:
+        last = groups[-1][-1] if groups else None
+        if last and hypot(spot[0] - last[0], spot[1] - last[1]) - (spot[2] + last[2]) / 2 < 0.6:
+            groups[-1].append(spot)
+        else:
+            groups.append([spot])
+    gaps = [
+        min(hypot(a[0] - b[0], a[1] - b[1]) - (a[2] + b[2]) / 2 for a in left for b in right)
+        for left, right in pairwise(groups)
+    ]
+    if not gaps:
+        return 0.0
+    link = settling.room(x, x).link
+    grown = sum(over_ribs(dia) - dia for _, _, dia in spots)
+    grown += 2 * (over_ribs(link) - link) if way.layer == 1 else 0.0
+    return max(0.0, settling.aggregate + 5 - (min(gaps) - grown / len(gaps)))
+
+
 def _leg_across(bent: Strand, other: Strand) -> float:
     """Return how deep a leg of one bar cuts into another bar that passes it. [mm]"""
     into = -1.0 if bent.face is Face.TOP else 1.0
@@ -152,6 +181,7 @@ def _give_way(strand: Strand, rivals: list[Strand], settling: Settling) -> Stran
     best: Way | None = None
     for order, way in enumerate(_ways(strand, rivals, clashing, settling)):
         lacks = [settling.lack(way, o) for o in _counted(way, rivals, settling)]
+        lacks.append(_rib_lack(way, rivals, settling))
         moved = max(hypot(*way.aside), hypot(way.y - strand.y, way.z - strand.z))
         found = Way(
             sum(1 for v in lacks if v > 1e-6), round(sum(lacks), 2), round(moved, 2), order, way
@@ -164,14 +194,14 @@ def _give_way(strand: Strand, rivals: list[Strand], settling: Settling) -> Stran
 def _counted(way: Strand, rivals: list[Strand], settling: Settling) -> Iterator[Strand]:
     """Yield the bars a strand must keep its distance from.
 
-    Left out are bars of its own seating while neither has moved, and bars beyond one that it
-    touches and that they touch too: these make one group.
+    Left out are bars of its own seating while both are where it put them, and bars beyond one
+    that it touches and that they touch too: these make one group.
     """
     apart = [_clear(way, o) for o in rivals]
     touched = [o for o, clear in zip(rivals, apart, strict=True) if abs(clear) < TOUCH]
     for other, clear in zip(rivals, apart, strict=True):
-        unmoved = way.aside == (0.0, 0.0) and other.aside == (0.0, 0.0)
-        if unmoved and settling.sat_together(way, other) and clear > 1.0:
+        at_home = way.seated and other.seated
+        if at_home and settling.sat_together(way, other) and clear > 1.0:
             continue
         grouped = clear > TOUCH and any(
             o is not other and _share(o, other) > 0 and abs(_clear(o, other)) < TOUCH
@@ -194,15 +224,19 @@ def _ways(
     for y, z in _places(strand, window, start, settling):
         offset = (y - strand.y, z - strand.z)
         if tail_only and _inside(near, y, z, strand.dia):
-            yield replace(strand, aside=offset, aside_to=meet + BEND)
+            yield replace(strand, aside=offset, aside_to=meet + BEND, seated=False)
         if not strand.corner and _inside(whole_room, y, z, strand.dia):
-            yield replace(strand.moved(*offset), aside=(0.0, 0.0), aside_to=0.0)
+            yield _whole(strand, *offset)
     if strand.corner and not tail_only:
         for y, z in _places(strand, window, start, settling):
             if _inside(whole_room, y, z, strand.dia):
-                yield replace(
-                    strand.moved(y - strand.y, z - strand.z), aside=(0.0, 0.0), aside_to=0.0
-                )
+                yield _whole(strand, y - strand.y, z - strand.z)
+
+
+def _whole(strand: Strand, dy: float, dz: float) -> Strand:
+    """Return the whole bar elsewhere."""
+    moved = strand.moved(dy, dz)
+    return replace(moved, aside=(0.0, 0.0), aside_to=0.0, seated=False)
 
 
 def _places(

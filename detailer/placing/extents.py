@@ -37,6 +37,7 @@ class Around:
     going_on: tuple[tuple[float, float], ...]  # (diameter, z) of the bars that go on
     own: tuple[tuple[float, float], ...]  # of the run itself
     setback: tuple[float, float] = (0.0, 0.0)  # of bends at the line's two ends [mm]
+    upper: bool = False  # a layer above the first of bars that run through
 
 
 OTHER_FACE = 70.0
@@ -100,7 +101,8 @@ def _span_end(
         x = beam.start if side < 0 else beam.end
         if not last:
             return x - side * free_end(beam, run.face), _fixed_form(run, around, want)
-    if not run.primary and around.demand is not None and run.face is Face.BOTTOM:
+    may_stop = not run.primary or (around.upper and not last)
+    if may_stop and around.demand is not None and run.face is Face.BOTTOM:
         cut = _bottom_cut(run, around, span, side)
         if cut is not None:
             return cut, _fixed_form(run, around, want)

@@ -193,8 +193,13 @@ def link_bars(
 def _around(
     strands: tuple[Strand, ...], x: float, dia: float
 ) -> tuple[tuple[float, float, float], ...]:
-    """Return (y, z, diameter) of what a link at x must clear: bars, and legs of bent ends."""
-    found = [(*s.at(x), s.dia) for s in strands if s.covers(x)]
+    """Return (y, z, diameter) of what a link at x must clear: bars, and legs of bent ends.
+
+    The ends of a link pass each other, so its tails reach a diameter before x and after it: a
+    bar that cranks there, or ends there, is met where it is.
+    """
+    met = ((*s.at(at), s.dia) for at in (x, x - dia, x + dia) for s in strands if s.covers(at))
+    found = list(dict.fromkeys(met))
     for s in strands:
         for end, tip, inward in ((s.left, s.x0, 1.0), (s.right, s.x1, -1.0)):
             axis = tip + inward * s.dia / 2

@@ -112,11 +112,34 @@ def _seated(project: Project, beam: Beam, demand: Demand | None, spacer: int) ->
         around = _around(project, beam, demand, seated, among)
         layers = sorted({seat.layer for seat in seats})
         extents = tuple(
-            (layer, _extent(run, replace(around, setback=_setback(beam, done, run, layer))))
+            (
+                layer,
+                _extent(
+                    run,
+                    replace(
+                        _of_layer(around, seated, layer),
+                        setback=_setback(beam, done, run, layer),
+                    ),
+                ),
+            )
             for layer in layers
         )
         done.append(replace(seated, extents=extents))
     return tuple(sorted(done, key=lambda s: s.index))
+
+
+def _of_layer(around: Around, seated: Seated, layer: int) -> Around:
+    """Return what decides the extent of one layer: the layers before it go on.
+
+    Bars of a second layer at the bottom may stop short of an inner support where the first
+    layer is what must enter it; so they do not crowd the joint.
+    """
+    if layer == 1 or not seated.run.primary or seated.run.face is not Face.BOTTOM:
+        return around
+    rows = seated.rows()
+    before = tuple(row for row, seat in zip(rows, seated.seats, strict=True) if seat.layer < layer)
+    own = tuple(row for row, seat in zip(rows, seated.seats, strict=True) if seat.layer >= layer)
+    return replace(around, going_on=before, own=own, upper=True)
 
 
 def _extent(run: Run, around: Around) -> Extent:

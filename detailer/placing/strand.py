@@ -41,6 +41,7 @@ class Strand:
     left: End = STRAIGHT
     right: End = STRAIGHT
     corner: bool = False
+    seated: bool = True  # where its layer's seating put it; False once it had to give way
     aside: tuple[float, float] = (0.0, 0.0)
     aside_to: float = 0.0
 
