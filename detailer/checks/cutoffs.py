@@ -8,12 +8,13 @@ from dataclasses import dataclass
 import numpy as np
 
 from detailer.checks.case import Case
+from detailer.checks.demand import tension_asked
 from detailer.findings import Finding
 from detailer.model import Span, Support
 from detailer.rules import is456
 from detailer.statics import Envelope
 from detailer.strength.development import Rod
-from detailer.strength.slices import Floats, area
+from detailer.strength.slices import area
 from detailer.values import ContactKind, Face, Severity
 
 TOGETHER = 30.0
@@ -95,11 +96,6 @@ def check(case: Case) -> Iterator[Finding]:
         yield from _in_tension(case, cut, case.envelope)
 
 
-def _tension(envelope: Envelope, face: Face, xs: Floats) -> Floats:
-    least, most = envelope.moments(xs)
-    return np.maximum(most if face is Face.BOTTOM else -least, 0.0)
-
-
 def _extension(case: Case, cut: Cut, envelope: Envelope) -> Iterator[Finding]:
     """Yield where bars end closer than max(d, 12 φ) to where they are no longer needed."""
     far = max(abs(end - cut.x) for bar in cut.bars for end in bar.tips)
@@ -111,7 +107,7 @@ def _extension(case: Case, cut: Cut, envelope: Envelope) -> Iterator[Finding]:
     rest = case.steel.profile(
         xs, sagging=cut.face is Face.BOTTOM, full=True, without=cut.ids, span=cut.span
     )
-    asked = _tension(envelope, cut.face, xs)
+    asked = tension_asked(case, envelope, cut.span, cut.face, xs)
     over = np.nonzero(asked > np.maximum([r.moment * 1.001 for r in rest], NO_TENSION))[0]
     if len(over) == 0:
         return
@@ -161,7 +157,7 @@ def _behind(case: Case, cut: Cut) -> Support | None:
 def _in_tension(case: Case, cut: Cut, envelope: Envelope) -> Iterator[Finding]:
     """Yield bars that stop in a tension zone by none of the three ways of 26.2.3.2."""
     at = np.array([cut.x])
-    asked = float(_tension(envelope, cut.face, at)[0])
+    asked = float(tension_asked(case, envelope, cut.span, cut.face, at)[0])
     if asked <= NO_TENSION:
         return
     capacity = case.shear.capacity(cut.x, cut.span, cut.face)

@@ -8,6 +8,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from detailer.checks.case import Case
+from detailer.checks.demand import moments_asked
 from detailer.findings import Finding
 from detailer.model import Span
 from detailer.strength.bending import Resistance
@@ -24,13 +25,17 @@ def check(case: Case) -> Iterator[Finding]:
     ----------
     case : Case
         The member.
+
+    References
+    ----------
+    .. [1] IS 456:2000, 38.1, 26.2.1 and, for what torsion adds, 41.4.2.
     """
     if case.envelope is None:
         return
     for span in case.beam.spans:
         xs = case.envelope.sample(span, 50.0)
-        least, most = case.envelope.moments(xs)
-        for sagging, asked in ((True, np.maximum(most, 0)), (False, np.maximum(-least, 0))):
+        bottom, top = moments_asked(case, case.envelope, span, xs)
+        for sagging, asked in ((True, bottom), (False, top)):
             carried = case.steel.profile(xs, sagging=sagging, span=span)
             have = np.array([r.moment for r in carried])
             short = asked > np.maximum(have * SLACK, 1e5)
@@ -59,6 +64,7 @@ def _finding(
     here = case.steel.at(x, face)
     full = case.steel.profile(np.array([x]), sagging=sagging, full=True, span=span)[0]
     place = case.place(x)
+    twisted = case.envelope is not None and case.envelope.torsion(x) > 0
     if carried.over_reinforced:
         why, remedy = "the neutral axis is at its limit", "Add compression steel or depth"
     elif full.moment * SLACK >= asked:
@@ -75,8 +81,8 @@ def _finding(
         found=round(carried.moment / 1e6, 1),
         required=round(asked / 1e6, 1),
         unit="kN m",
-        clause="IS 456:2000, 38.1 and 26.2.1",
+        clause="IS 456:2000, 38.1, 26.2.1" + (", 41.4.2" if twisted else ""),
         message=f"{place.name}: {face.value} steel resists {carried.moment / 1e6:.1f} kN m, "
-        f"{asked / 1e6:.1f} needed ({why})",
+        f"{asked / 1e6:.1f} needed{', torsion included' if twisted else ''} ({why})",
         remedy=remedy,
     )

@@ -115,14 +115,9 @@ def _carried(case: Case, at: Station) -> tuple[float, Finding | None]:
     """Return asked over carried, and the finding where that is too much."""
     carried = at.carried
     if at.twist > 0 and at.asked > carried.concrete:
-        need = _torsion_links(case, at)
-        found, required, unit, rule, clause = (
-            carried.asv,
-            need.value,
-            "mm2",
-            "torsion-links",
-            need.clause,
-        )
+        have, need = _torsion_links(case, at)
+        found, required, unit = have, need.value, "mm2"
+        rule, clause = "torsion-links", need.clause
         said = f"links of {found:.0f} mm² at {carried.spacing:.0f} mm, {required:.0f} needed"
     else:
         found, required, unit = carried.total / 1e3, at.asked / 1e3, "kN"
@@ -152,21 +147,23 @@ def _carried(case: Case, at: Station) -> tuple[float, Finding | None]:
     )
 
 
-def _torsion_links(case: Case, at: Station) -> Required:
-    """Return the area two legs need for torsion and shear together."""
-    section = at.span.section
-    d = case.steel.depth(at.x, at.face, at.span) or section.depth - 50
+def _torsion_links(case: Case, at: Station) -> tuple[float, Required]:
+    """Return the area of links there is and is needed, for torsion and shear together.
+
+    What the formula asks stands in the two legs of the outer, closed link; its floor may stand in
+    all legs.
+    """
+    section, carried = at.span.section, at.carried
     corner = max((bar.dia for bar in case.steel.bars if bar.covers(at.x)), default=16.0)
     cover, link = case.beam.cover, max((s.dia for s in case.shear.sets), default=8.0)
-    return is456.torsion_link_area(
-        at.twist,
-        at.shear,
-        at.carried.spacing,
-        section.width - cover.left - cover.right - 2 * link - corner,
-        section.depth - cover.top - cover.bottom - 2 * link - corner,
-        case.project.steel.links.fy,
-        floor=(at.asked - at.carried.concrete) / d,
-    )
+    b1 = section.width - cover.left - cover.right - 2 * link - corner
+    d1 = section.depth - cover.top - cover.bottom - 2 * link - corner
+    fy = case.project.steel.links.fy
+    floor = (at.asked - carried.concrete) / carried.d
+    closed = is456.torsion_link_area(at.twist, at.shear, carried.spacing, b1, d1, fy, floor=0.0)
+    all_legs = is456.torsion_link_area(0.0, 0.0, carried.spacing, b1, d1, fy, floor=floor)
+    pairs = (carried.hoop, closed), (carried.asv, all_legs)
+    return max(pairs, key=lambda pair: pair[1].value / max(pair[0], 1e-9))
 
 
 def _crushed(case: Case, at: Station) -> Finding:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from bisect import bisect_left, bisect_right
 from dataclasses import dataclass
+from math import inf
 
 from detailer.cage.bar import Bar, Cage
 from detailer.model import Span
@@ -23,6 +24,7 @@ class LinkSet:
     x: float
     legs: int
     asv: float  # all legs [mm²]
+    hoop: float  # the two legs of the outer link [mm²]
     dia: float
     marks: tuple[str, ...]
     closed: bool
@@ -37,7 +39,8 @@ class ShearCapacity:
     limit: float  # τc,max b d [N]
     pt: float  # [%]
     d: float  # [mm]
-    asv: float  # [mm²]
+    asv: float  # all legs [mm²]
+    hoop: float  # the two legs of the outer links [mm²]
     spacing: float  # of the links around the section [mm]
 
     @property
@@ -90,10 +93,12 @@ def _widest(cage: Cage) -> float:
 
 def _set(group: list[tuple[float, Bar]]) -> LinkSet:
     legs = [2 if bar.role is Role.LINK else 1 for _, bar in group]
+    outer = max((bar for _, bar in group if bar.role is Role.LINK), key=_width, default=None)
     return LinkSet(
         x=group[0][0],
         legs=sum(legs),
         asv=sum(n * area(bar.dia) for n, (_, bar) in zip(legs, group, strict=True)),
+        hoop=2 * area(outer.dia) if outer else 0.0,
         dia=min(bar.dia for _, bar in group),
         marks=tuple(sorted({bar.name for _, bar in group})),
         closed=group[0][1].role is Role.LINK,
@@ -118,14 +123,27 @@ class Shear:
         span : Span
             Its span.
         """
+        a, b, spacing = self.beside(x, span)
+        return min((s.asv for s in (a, b) if s), default=0.0), spacing
+
+    def beside(self, x: float, span: Span) -> tuple[LinkSet | None, LinkSet | None, float]:
+        """Return the link sets left and right of x within a span, and their distance. [mm]
+
+        Parameters
+        ----------
+        x : float
+            Along the member. [mm]
+        span : Span
+            Its span.
+        """
         x0, x1 = self.steel.beam.clear(span)
         xs = [s.x for s in self.sets]
         first, last = bisect_left(xs, x0 - 1), bisect_right(xs, x1 + 1)
         if last - first < 2:
-            return (self.sets[first].asv, x1 - x0) if last > first else (0.0, float("inf"))
+            return (self.sets[first], None, x1 - x0) if last > first else (None, None, inf)
         k = min(max(bisect_right(xs, x), first + 1), last - 1)
         a, b = self.sets[k - 1], self.sets[k]
-        return min(a.asv, b.asv), b.x - a.x
+        return a, b, b.x - a.x
 
     def counted(self, x: float, face: Face, d: float) -> tuple[Rod, ...]:
         """Return the tension bars that go on at least d past x, or into a support or tip.
@@ -167,7 +185,9 @@ class Shear:
         b = span.section.width
         d = self.steel.depth(x, face, span) or span.section.depth - 50
         pt = 100 * sum(area(r.dia) for r in self.counted(x, face, d)) / (b * d)
-        asv, spacing = self.around(x, span)
+        left, right, spacing = self.beside(x, span)
+        near = [s for s in (left, right) if s]
+        asv = min((s.asv for s in near), default=0.0)
         links = is456.link_shear(asv, spacing, d, project.steel.links.fy) if asv else 0.0
         return ShearCapacity(
             concrete=is456.shear_strength(pt, fck) * b * d,
@@ -176,6 +196,7 @@ class Shear:
             pt=pt,
             d=d,
             asv=asv,
+            hoop=min((s.hoop for s in near), default=0.0),
             spacing=spacing,
         )
 
