@@ -216,7 +216,7 @@ def centre_line(bar: Bar) -> CentreLine:
     return line_through(bar.corners, bar.mandrels, bar.dia)
 
 
-@lru_cache(maxsize=8192)
+@lru_cache(maxsize=1024)
 def line_through(corners: tuple[Point, ...], mandrels: tuple[float, ...], dia: float) -> CentreLine:
     """Return the centre line of a bar given by its corners, as :func:`centre_line` does.
 

@@ -65,7 +65,7 @@ def outer_box(bar: Bar) -> Box:
     return _outer_box(bar.corners, bar.mandrels, bar.dia)
 
 
-@lru_cache(maxsize=8192)
+@lru_cache(maxsize=1024)
 def _outer_box(corners: tuple[Point, ...], mandrels: tuple[float, ...], dia: float) -> Box:
     low, high = [float("inf")] * 3, [float("-inf")] * 3
     line, radius = line_through(corners, mandrels, dia), dia / 2
