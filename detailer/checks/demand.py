@@ -8,7 +8,7 @@ from numpy.typing import NDArray
 from detailer.checks.case import Case
 from detailer.model import Span
 from detailer.statics import Envelope
-from detailer.strength.torsion import resisted, with_torsion
+from detailer.strength.torsion import added_moment, resisted, with_torsion
 from detailer.values import Face
 
 Floats = NDArray[np.float64]
@@ -39,7 +39,7 @@ def moments_asked(case: Case, envelope: Envelope, span: Span, xs: Floats) -> tup
     twist = resisted(
         case.shear, span, xs, (least, most), np.maximum(high, -low), envelope.torsions(xs)
     )
-    return with_torsion(least, most, twist, span.section)
+    return with_torsion(least, most, added_moment(twist, span.section))
 
 
 def tension_asked(case: Case, envelope: Envelope, span: Span, face: Face, xs: Floats) -> Floats:

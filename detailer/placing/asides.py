@@ -178,17 +178,28 @@ def _give_way(strand: Strand, rivals: list[Strand], settling: Settling) -> Stran
     met = min(_share(strand, o) for o in clashing)
     if met < OVERLAP and min(o.x0 for o in clashing) < strand.x0:
         strand = replace(strand, x0=strand.x0 - (OVERLAP - met))
+    ways = sorted(
+        (
+            (_moved(strand, way), n, way)
+            for n, way in enumerate(_ways(strand, rivals, clashing, settling))
+        ),
+        key=lambda item: item[:2],
+    )
     best: Way | None = None
-    for order, way in enumerate(_ways(strand, rivals, clashing, settling)):
+    for moved, order, way in ways:
         lacks = [settling.lack(way, o) for o in _counted(way, rivals, settling)]
         lacks.append(_rib_lack(way, rivals, settling))
-        moved = max(hypot(*way.aside), hypot(way.y - strand.y, way.z - strand.z))
-        found = Way(
-            sum(1 for v in lacks if v > 1e-6), round(sum(lacks), 2), round(moved, 2), order, way
-        )
+        found = Way(sum(1 for v in lacks if v > 1e-6), round(sum(lacks), 2), moved, order, way)
         if best is None or found[:4] < best[:4]:
             best = found
+        if found.conflicts == 0:
+            break
     return best.strand if best is not None else plain
+
+
+def _moved(strand: Strand, way: Strand) -> float:
+    """Return how far a way moves a strand."""
+    return round(max(hypot(*way.aside), hypot(way.y - strand.y, way.z - strand.z)), 2)
 
 
 def _counted(way: Strand, rivals: list[Strand], settling: Settling) -> Iterator[Strand]:

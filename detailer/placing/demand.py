@@ -13,6 +13,7 @@ from detailer.rules import is456
 from detailer.statics import Envelope
 from detailer.strength.bending import Row, resistance
 from detailer.strength.section import shape_of
+from detailer.strength.torsion import added_moment, with_torsion
 from detailer.values import Face
 
 
@@ -32,6 +33,9 @@ class Demand:
     def tension(self, face: Face, xs: NDArray[np.float64]) -> NDArray[np.float64]:
         """Return the moment that puts a face in tension, 0 where none does. [N·mm]
 
+        All torsion counts, even where the concrete would resist it (41.3.2): links are not known
+        yet, and bars run further for it.
+
         Parameters
         ----------
         face : Face
@@ -39,8 +43,19 @@ class Demand:
         xs : ndarray
             Places along the line. [mm]
         """
-        least, most = self.envelope.moments(xs)
-        return np.maximum(most if face is Face.BOTTOM else -least, 0.0)
+        bottom, top = with_torsion(*self.envelope.moments(xs), self._added(xs))
+        return bottom if face is Face.BOTTOM else top
+
+    def _added(self, xs: NDArray[np.float64]) -> NDArray[np.float64]:
+        """Return the moment that torsion adds. [N·mm]"""
+        added = np.zeros(len(xs))
+        if self.envelope.twisted:
+            twist = self.envelope.torsions(xs)
+            for span in self.beam.spans:
+                here = (xs >= span.x0) & (xs <= span.x1)
+                mine = added_moment(twist[here], span.section)
+                added[here] = np.maximum(added[here], mine)
+        return added
 
     def tension_at(self, face: Face, x: float) -> float:
         """Return the same at one place. [N·mm]"""

@@ -16,7 +16,7 @@ from detailer.placing.strand import End, Strand
 from detailer.rules import is456
 from detailer.values import Face
 
-GRID = 50.0
+GRID = 100.0
 """Laps are tried at this step. [mm]"""
 
 

@@ -13,9 +13,24 @@ from detailer.values import Face
 Floats = NDArray[np.float64]
 
 
-def with_torsion(
-    least: Floats, most: Floats, torsion: Floats, section: Section
-) -> tuple[Floats, Floats]:
+def added_moment(torsion: Floats, section: Section) -> Floats:
+    """Return the moment that torsion adds to bending. [N·mm]
+
+    Parameters
+    ----------
+    torsion : ndarray
+        Unsigned; 0 where none need be resisted. [N·mm]
+    section : Section
+        Concrete section there.
+
+    References
+    ----------
+    .. [1] IS 456:2000, 41.4.2.
+    """
+    return torsion * is456.torsion_moment(1.0, section.depth, section.width)
+
+
+def with_torsion(least: Floats, most: Floats, added: Floats) -> tuple[Floats, Floats]:
     """Return the moments that bottom and top must resist, torsion included. [N·mm]
 
     Where a face is in tension its moment grows by Mt; where it is in compression and Mt is the
@@ -26,16 +41,13 @@ def with_torsion(
     ----------
     least, most : ndarray
         Bending moments, sagging +. [N·mm]
-    torsion : ndarray
-        Unsigned; 0 where none need be resisted. [N·mm]
-    section : Section
-        Concrete section there.
+    added : ndarray
+        Mt, from :func:`added_moment`. [N·mm]
 
     References
     ----------
     .. [1] IS 456:2000, 41.4.2 and 41.4.2.1.
     """
-    added = torsion * is456.torsion_moment(1.0, section.depth, section.width)
     return np.maximum(most + added, 0.0), np.maximum(added - least, 0.0)
 
 

@@ -133,6 +133,26 @@ def links(span: int, *zones: str) -> str:
     return f"\n[[beam.links]]\nspan = {span}\nzones = {list(zones)}\n"
 
 
+def terrace(
+    spans: Sequence[int], through: str, extras: str, below: Sequence[str], *, depth: int = 500
+) -> Line:
+    """Return a line of 230 under 24 + 12 kN/m: bars through, and extras over inner supports."""
+    count = len(spans)
+    return Line(
+        mark=f"SK2{count}",
+        width=230,
+        depth=depth,
+        supports=[COLUMN] * (count + 1),
+        spans=[loaded(span, 24, 12) for span in spans],
+        steel=[
+            top(f"1-{count}", through),
+            *[over(f"{chr(65 + n)}1", extras) for n in range(1, count)],
+            *below,
+            *[links(n, "2L-T8@200") for n in range(1, count + 1)],
+        ],
+    )
+
+
 @dataclass(frozen=True)
 class Scenario:
     """A beam placed and checked."""
@@ -181,6 +201,35 @@ class Scenario:
         """Return where links stand between the faces of a span."""
         x0, x1 = self.beam.clear(self.beam.spans[span - 1])
         return sorted({s.x for s in self.case.shear.sets if x0 < s.x < x1})
+
+    def hogging_ends(self, span: int) -> list[float]:
+        """Return how far from the nearer end of a span its hogging envelope is zero."""
+        assert self.case.envelope is not None
+        here = self.beam.spans[span - 1]
+        zeros = self.case.envelope.inflections(here, hogging=True)
+        return [min(x - here.x0, here.x1 - x) for x in zeros]
+
+    def sagging(self, span: int) -> tuple[float, float]:
+        """Return where a span sags most, from its left end, and by how much [kN·m]."""
+        assert self.case.envelope is not None
+        here = self.beam.spans[span - 1]
+        x, moment = self.case.envelope.peak_sagging(here)
+        return x - here.x0, moment / MEGA
+
+    def hogging(self, support: int) -> float:
+        """Return the greatest hogging moment at the faces of a support [kN·m]."""
+        assert self.case.envelope is not None
+        return self.case.envelope.peak_hogging(support) / MEGA
+
+    def reaches(self, support: int, dia: int) -> set[tuple[int, int]]:
+        """Return how far top bars over one support go past its faces, left and right."""
+        at = self.beam.supports[support]
+        others = [s for s in self.beam.supports if s is not at]
+        return {
+            (round(at.left - rod.tips[0]), round(rod.tips[1] - at.right))
+            for rod in self.rods(Face.TOP, dia)
+            if rod.covers(at.x) and not any(rod.covers(s.x) for s in others)
+        }
 
     def moment(self, x: float) -> tuple[float, float]:
         """Return the design moments [kN·m] at x."""

@@ -18,14 +18,15 @@ from detailer.findings import Finding
 from detailer.model import Section, Station, Stations
 from detailer.rules import is456
 from detailer.statics import envelope
-from detailer.strength.torsion import with_torsion
+from detailer.strength.torsion import added_moment, with_torsion
 from detailer.values import Face, Role
 
 CANOPY = Section(width=300.0, depth=600.0)
 
 
 def asked(least: float, most: float, t: float, section: Section = CANOPY) -> tuple[float, float]:
-    bottom, top = with_torsion(np.array([least]), np.array([most]), np.array([t]), section)
+    added = added_moment(np.array([t]), section)
+    bottom, top = with_torsion(np.array([least]), np.array([most]), added)
     return float(bottom[0]), float(top[0])
 
 
