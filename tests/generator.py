@@ -262,6 +262,40 @@ cover = 40
         return self.header() + "\n" + self.beam()
 
 
+class RoomyDraft(Draft):
+    """A line with steel, width and supports to spare: most come out sound."""
+
+    def __init__(self, seed: int) -> None:
+        super().__init__(seed)
+        rng = self.rng
+        self.fck = rng.choice((25, 30, 35))
+        self.fy = rng.choice((415, 500))
+        self.count = rng.choice((1, 2, 2, 3, 3))
+        self.width = rng.choice((300, 350, 400))
+        self.cover = rng.choice((30, 40))
+        base = rng.uniform(0.85, 1.0) * {1: 6.5, 2: 5.3, 3: 3.6}[self.count]
+        self.spans = [round(base * rng.uniform(0.93, 1.0), 2) for _ in range(self.count)]
+        tips = [round(rng.uniform(0.9, 1.4), 2) if rng.random() < 0.2 else 0.0 for _ in range(2)]
+        self.tips = tips if self.count < 3 else [0.0, 0.0]
+        self.kind = "column"
+        self.support = rng.choice((400, 450, 500))
+        depth = max(400, int(base * 1000 / rng.uniform(9.5, 11.5) / 50) * 50)
+        depth = 850 if rng.random() < 0.15 else depth
+        step = rng.random() < 0.25 and self.count > 1 and depth > 450
+        self.depths = [depth - (100 if step and k % 2 else 0) for k in range(self.count)]
+        self.flange = rng.random() < 0.3
+        self.dead = round(rng.uniform(10, 20), 1)
+        self.live = round(self.dead * rng.uniform(0.3, 0.6), 1)
+
+    def steel_for(self, moment: float, depth: float) -> float:
+        return 1.25 * super().steel_for(moment, depth)
+
+
+def roomy_project(seed: int) -> str:
+    """Return the project file of one roomy beam line."""
+    return RoomyDraft(seed).text()
+
+
 def random_project(seed: int) -> str:
     """Return the project file of one random beam line."""
     return Draft(seed).text()

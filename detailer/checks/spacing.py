@@ -6,6 +6,7 @@ from collections.abc import Iterator
 from itertools import pairwise
 from math import hypot
 
+from detailer.cage.ribs import TOUCHING, Spot, taken
 from detailer.checks.case import Case
 from detailer.checks.stations import Station, stations
 from detailer.findings import Finding
@@ -13,9 +14,6 @@ from detailer.model import over_ribs
 from detailer.rules import is456
 from detailer.strength.development import Rod
 from detailer.values import GAP_SLACK, Face, Required, Severity
-
-TOUCHING = 0.6
-"""Bars this close lie against each other as a lap does. [mm]"""
 
 CROWDED = 4 / 3
 """Gaps under so many aggregates are hard to concrete (a trade article; fault of practice)."""
@@ -43,9 +41,9 @@ def _groups(station: Station, row: tuple[Rod, ...]) -> list[list[Rod]]:
     """Return the bars of a layer with those that touch put together."""
     groups: list[list[Rod]] = []
     for bar in row:
-        last = groups[-1][-1] if groups else None
-        if last is not None and _clear(station.x, last, bar) < TOUCHING:
-            groups[-1].append(bar)
+        last = groups[-1] if groups else []
+        if any(_clear(station.x, other, bar) < TOUCHING for other in last):
+            last.append(bar)
         else:
             groups.append([bar])
     return groups
@@ -84,8 +82,7 @@ def _sideways(case: Case, station: Station, face: Face) -> Iterator[Finding]:
 
 def _growth(case: Case, station: Station, groups: list[list[Rod]], face: Face, layer: int) -> float:
     """Return what a layer packed anew over ribs loses of its gaps, links included. [mm]"""
-    bars = [bar for group in groups for bar in group]
-    grown = sum(over_ribs(bar.dia) - bar.dia for bar in bars)
+    grown = taken([[Spot(*bar.at(station.x), bar.dia) for bar in group] for group in groups])
     links = [s.dia for s in case.shear.sets if abs(s.x - station.x) < 400]
     if not links or layer > 1:
         return grown

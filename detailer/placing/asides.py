@@ -8,6 +8,7 @@ from itertools import pairwise
 from math import hypot, sqrt
 from typing import NamedTuple
 
+from detailer.cage.ribs import Spot, groups_of, taken
 from detailer.model import over_ribs
 from detailer.placing.frame import Frame, gap_needed
 from detailer.placing.strand import Strand
@@ -27,6 +28,9 @@ TOUCH = 0.2
 
 BEND = 22.0
 """A crank starts so far past the end it passes, so that its bend spares the lap. [mm]"""
+
+CLASH = 100.0
+"""What bars that penetrate lack at least: worse than any want of space. [mm]"""
 
 TAIL = 400.0
 """A bar must go on this far past those it passes before it can crank back. [mm]"""
@@ -49,14 +53,16 @@ class Settling:
         """Return how much two bars lack to the distance they need; 0 where they touch."""
         crossed = max(_leg_across(a, b), _leg_across(b, a))
         if crossed > 0:
-            return 100.0 + crossed
+            return CLASH + crossed
         if _share(a, b) <= -NEAR:
             return 0.0
         clear = _clear(a, b)
         if abs(clear) < TOUCH:
+            if _parts(a, b):
+                return self.need(a, b)
             return 0.0 if _share(a, b) > NEAR else 5.0
         if clear < 0:
-            return 100.0 - clear
+            return CLASH - clear
         if a.layer != b.layer:
             return max(0.0, max(15.0, self.aggregate * 2 / 3, a.dia, b.dia) - clear)
         return max(0.0, self.need(a, b) - clear)
@@ -71,6 +77,7 @@ class Settling:
 class Way(NamedTuple):
     """One way out, and what it leaves undone; the least is the best."""
 
+    clashes: int
     conflicts: int
     lack: float
     moved: float
@@ -96,10 +103,37 @@ def settle(strands: Iterable[Strand], settling: Settling) -> tuple[Strand, ...]:
     of those the nearest.
     """
     done: list[Strand] = []
-    for strand in sorted(strands, key=lambda s: (s.face.value, s.x0, s.layer, s.y, s.run)):
+    queue = sorted(strands, key=lambda s: (s.face.value, s.x0, s.layer, s.y, s.run))
+    for n, strand in enumerate(queue, start=1):
         rivals = [o for o in done if o.face is strand.face and _share(o, strand) > -2 * NEAR]
-        done.append(_give_way(strand, rivals, settling))
+        clashing = _clashing(strand, rivals, settling)
+        if clashing:
+            meet = max(o.x1 for o in clashing)
+            ahead = [
+                o
+                for o in queue[n:]
+                if o.face is strand.face
+                and o.x0 < meet + NEAR
+                and _share(o, strand) > NEAR
+                and not _clashing(o, rivals, settling)
+            ]
+            done.append(_give_way(strand, rivals, ahead, clashing, settling))
+        else:
+            done.append(_plain(strand))
     return tuple(done)
+
+
+def _plain(strand: Strand) -> Strand:
+    """Return a strand that need not give way."""
+    return strand if strand.aside != (0.0, 0.0) else replace(strand, aside_to=0.0)
+
+
+def _clashing(strand: Strand, rivals: list[Strand], settling: Settling) -> list[Strand]:
+    """Return the bars that a strand would meet where it lies."""
+    plain = _plain(strand)
+    return [
+        o for o in rivals if not settling.sat_together(plain, o) and settling.lack(plain, o) > 1e-6
+    ]
 
 
 def _share(a: Strand, b: Strand) -> float:
@@ -125,6 +159,16 @@ def _clear(a: Strand, b: Strand) -> float:
     return least - (a.dia + b.dia) / 2
 
 
+def _parts(a: Strand, b: Strand) -> bool:
+    """Return whether two strands that touch somewhere part where both go on."""
+    touch = (a.dia + b.dia) / 2 + TOUCH
+    for x in (max(a.x0, b.x0), min(a.x1, b.x1)):
+        (ya, za), (yb, zb) = a.at(x), b.at(x)
+        if hypot(ya - yb, za - zb) > touch:
+            return True
+    return False
+
+
 def _rib_lack(way: Strand, rivals: list[Strand], settling: Settling) -> float:
     """Return how much a layer packed over ribs lacks where a bar starts. [mm]
 
@@ -132,23 +176,12 @@ def _rib_lack(way: Strand, rivals: list[Strand], settling: Settling) -> float:
     """
     x = way.x0 + 1.0
     row = [o for o in rivals if o.layer == way.layer and o.covers(x)]
-    spots = sorted((*o.at(x), o.dia) for o in (*row, way))
-    groups: list[list[tuple[float, float, float]]] = []
-    for spot in spots:
-        last = groups[-1][-1] if groups else None
-        if last and hypot(spot[0] - last[0], spot[1] - last[1]) - (spot[2] + last[2]) / 2 < 0.6:
-            groups[-1].append(spot)
-        else:
-            groups.append([spot])
-    gaps = [
-        min(hypot(a[0] - b[0], a[1] - b[1]) - (a[2] + b[2]) / 2 for a in left for b in right)
-        for left, right in pairwise(groups)
-    ]
+    groups = groups_of(Spot(*o.at(x), o.dia) for o in (*row, way))
+    gaps = [min(a.clear(b) for a in left for b in right) for left, right in pairwise(groups)]
     if not gaps:
         return 0.0
     link = settling.room(x, x).link
-    grown = sum(over_ribs(dia) - dia for _, _, dia in spots)
-    grown += 2 * (over_ribs(link) - link) if way.layer == 1 else 0.0
+    grown = taken(groups) + (2 * (over_ribs(link) - link) if way.layer == 1 else 0.0)
     return max(0.0, settling.aggregate + 5 - (min(gaps) - grown / len(gaps)))
 
 
@@ -167,14 +200,15 @@ def _leg_across(bent: Strand, other: Strand) -> float:
     return worst
 
 
-def _give_way(strand: Strand, rivals: list[Strand], settling: Settling) -> Strand:
-    """Return the strand, moved where it would meet another."""
-    plain = strand if strand.aside != (0.0, 0.0) else replace(strand, aside_to=0.0)
-    clashing = [
-        o for o in rivals if not settling.sat_together(plain, o) and settling.lack(plain, o) > 1e-6
-    ]
-    if not clashing:
-        return plain
+def _give_way(
+    strand: Strand,
+    rivals: list[Strand],
+    ahead: list[Strand],
+    clashing: list[Strand],
+    settling: Settling,
+) -> Strand:
+    """Return the strand, moved where it would meet another; bars ahead of it will stay."""
+    plain = _plain(strand)
     met = min(_share(strand, o) for o in clashing)
     if met < OVERLAP and min(o.x0 for o in clashing) < strand.x0:
         strand = replace(strand, x0=strand.x0 - (OVERLAP - met))
@@ -187,10 +221,12 @@ def _give_way(strand: Strand, rivals: list[Strand], settling: Settling) -> Stran
     )
     best: Way | None = None
     for moved, order, way in ways:
-        lacks = [settling.lack(way, o) for o in _counted(way, rivals, settling)]
-        lacks.append(_rib_lack(way, rivals, settling))
-        found = Way(sum(1 for v in lacks if v > 1e-6), round(sum(lacks), 2), moved, order, way)
-        if best is None or found[:4] < best[:4]:
+        lacks = [settling.lack(way, o) for o in _counted(way, [*rivals, *ahead], settling)]
+        lacks.append(_rib_lack(way, [*rivals, *ahead], settling))
+        clashes = sum(1 for lack in lacks if lack >= CLASH)
+        conflicts = sum(1 for lack in lacks if lack > 1e-6)
+        found = Way(clashes, conflicts, round(sum(lacks), 2), moved, order, way)
+        if best is None or found[:5] < best[:5]:
             best = found
         if found.conflicts == 0:
             break
@@ -206,7 +242,7 @@ def _counted(way: Strand, rivals: list[Strand], settling: Settling) -> Iterator[
     """Yield the bars a strand must keep its distance from.
 
     Left out are bars of its own seating while both are where it put them, and bars beyond one
-    that it touches and that they touch too: these make one group.
+    that it touches and that they touch too, if it goes on as long: these make one group.
     """
     apart = [_clear(way, o) for o in rivals]
     touched = [o for o, clear in zip(rivals, apart, strict=True) if abs(clear) < TOUCH]
@@ -215,7 +251,10 @@ def _counted(way: Strand, rivals: list[Strand], settling: Settling) -> Iterator[
         if at_home and settling.sat_together(way, other) and clear > 1.0:
             continue
         grouped = clear > TOUCH and any(
-            o is not other and _share(o, other) > 0 and abs(_clear(o, other)) < TOUCH
+            o is not other
+            and _share(o, other) > 0
+            and abs(_clear(o, other)) < TOUCH
+            and o.x1 >= min(way.x1, other.x1)
             for o in touched
         )
         if not grouped:
@@ -269,6 +308,8 @@ def _places(
         if upright > 0:
             yield strand.y, oz + core * sqrt(upright)
         yield oy, oz + core * touch
+        yield oy, oz + core * clear
+        yield strand.y, oz + core * clear
 
 
 def _inside(room: Frame, y: float, z: float, dia: float) -> bool:

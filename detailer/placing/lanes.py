@@ -8,8 +8,9 @@ with the one below it.
 from __future__ import annotations
 
 from dataclasses import dataclass
-from itertools import combinations_with_replacement
+from itertools import combinations_with_replacement, pairwise
 
+from detailer.model import over_ribs
 from detailer.placing.frame import Frame, gap_needed
 
 
@@ -30,6 +31,7 @@ class Spacing:
 
     aggregate: float
     layer_gap: float  # clear, between layers [mm]
+    corners_last: bool = False  # layers above the first leave corners to the tails of hooks
 
     def gap(self, dias: tuple[int, ...]) -> float:
         """Return the least clear gap among bars of a layer."""
@@ -128,6 +130,7 @@ def _between(
     best: tuple[tuple[float, ...], tuple[Seat, ...]] | None = None
     for choice in combinations_with_replacement(range(len(first) - 1), len(dias)):
         seats, gap, slack = _fill_gaps(frame, first, dias, choice, spacing)
+        slack = min(slack, _packed_slack(frame, (*first, *seats), spacing))
         lean = abs(sum(s.y - frame.middle for s in seats))
         score = (round(min(slack, 0.0), 6), round(-lean, 3), round(gap, 6))
         if (forced or slack >= -1e-6) and (best is None or score > best[0]):
@@ -163,9 +166,16 @@ def _fill_gaps(
     return tuple(seats), least, slack
 
 
-def _growth(dia: float) -> float:
-    from detailer.model import over_ribs
+def _packed_slack(frame: Frame, row: tuple[Seat, ...], spacing: Spacing) -> float:
+    """Return what the least gap of a layer has to spare when ribs take their share of all. [mm]"""
+    spots = sorted((s.y, s.dia) for s in row)
+    gaps = [b - a - (p + q) / 2 for (a, p), (b, q) in pairwise(spots)]
+    grown = sum(_growth(dia) for _, dia in spots) + 2 * _growth(frame.link)
+    return min(gaps) - grown / len(gaps) - (spacing.aggregate + 5)
 
+
+def _growth(dia: float) -> float:
+    """Return what ribs add to a diameter. [mm]"""
     return over_ribs(dia) - dia
 
 
@@ -186,7 +196,12 @@ def stack(
         below = [s for s in (*taken, *seats) if s.layer == layer - 1]
         base = [s for s in taken if s.layer == 1] or below
         lanes = [s for s in base if all(abs(s.y - u.y) > (s.dia + u.dia) / 2 for u in used)]
-        picks = _pick(sorted(lanes, key=lambda s: s.y), len(left), frame.middle)
+        picks = _pick(
+            sorted(lanes, key=lambda s: s.y),
+            len(left),
+            frame.middle,
+            corners_last=spacing.corners_last,
+        )
         if not picks:
             layer += 1
             if layer > lowest + 8:
@@ -203,8 +218,13 @@ def stack(
     return tuple(seats)
 
 
-def _pick(lanes: list[Seat], count: int, middle: float) -> list[Seat]:
+def _pick(lanes: list[Seat], count: int, middle: float, *, corners_last: bool) -> list[Seat]:
     """Pick lanes for so many bars: outermost pairs, the middle one for an odd bar."""
+    inner = [lane for lane in lanes if not lane.corner]
+    if corners_last and count <= len(inner):
+        lanes = inner
+    elif corners_last and count < len(lanes):
+        return (inner + [lane for lane in lanes if lane.corner])[:count]
     count = min(count, len(lanes))
     picks: list[Seat] = []
     rest = list(lanes)

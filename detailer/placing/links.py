@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from math import ceil, hypot
 
 from detailer.cage import forms
@@ -13,6 +13,9 @@ from detailer.placing.frame import Frame
 from detailer.placing.strand import Strand
 from detailer.rules import is2502
 from detailer.values import EndForm, Face, Role
+
+HUG = 0.1
+"""Tails lie against the bar they bend round within this, and clear others by it. [mm]"""
 
 LEG_STEP = 8.0
 """Legs of bent ends are looked at in steps of this. [mm]"""
@@ -265,14 +268,51 @@ def _hook_corner(
         return cycle[0]
 
     def score(corner: forms.HookCorner) -> tuple[bool, bool]:
-        met = any(
-            _point_to_segment((y, z), *tail) < (dia + bar) / 2 - 0.1
-            for tail in _tails(ring, dia, frame.bend, corner)
-            for y, z, bar in bars
-        )
+        met = _tail_depth(ring, dia, frame.bend, corner, bars) > 0
         return met, not _holds_bar(ring, dia, frame.bend, corner, bars)
 
     return min(cycle, key=score)
+
+
+def hooks_meet(frame: Frame, zone: LinkZone, bars: tuple[tuple[float, float, float], ...]) -> float:
+    """Return how deep tails of the outer link cut into bars at its best corner; 0 if clear. [mm]
+
+    Parameters
+    ----------
+    frame : Frame
+        Room inside the outer link.
+    zone : LinkZone
+        Legs and diameter.
+    bars : tuple of (y, z, dia)
+        Bars of the section. [mm]
+    """
+    ring = rings(frame, replace(zone, legs=2), bars)[0]
+    corners = tuple(forms.HookCorner)
+    return max(0.0, min(_tail_depth(ring, zone.dia, frame.bend, c, bars) for c in corners))
+
+
+def _tail_depth(
+    ring: Ring,
+    dia: int,
+    bend: float,
+    corner: forms.HookCorner,
+    bars: tuple[tuple[float, float, float], ...],
+) -> float:
+    """Return how deep the tails of a hook cut into bars. [mm]
+
+    The bar they bend round may touch them; others must not.
+    """
+    tails = _tails(ring, dia, bend, corner)
+    return max(
+        (
+            (dia + bar) / 2
+            + (-HUG if _in_corner(ring, dia, bend, corner, (y, z, bar)) else HUG)
+            - _point_to_segment((y, z), *tail)
+            for tail in tails
+            for y, z, bar in bars
+        ),
+        default=0.0,
+    )
 
 
 def _tails(
@@ -307,11 +347,15 @@ def _holds_bar(
     bars: tuple[tuple[float, float, float], ...],
 ) -> bool:
     """Return whether a bar lies in a corner of a link."""
-    y = (
-        ring.y1 - dia
-        if corner in (forms.HookCorner.TOP_LEFT, forms.HookCorner.BOTTOM_LEFT)
-        else (ring.y0 + dia)
-    )
+    return any(_in_corner(ring, dia, bend, corner, bar) for bar in bars)
+
+
+def _in_corner(
+    ring: Ring, dia: int, bend: float, corner: forms.HookCorner, bar: tuple[float, float, float]
+) -> bool:
+    """Return whether a bar is the one that lies in a corner of a link."""
+    left = corner in (forms.HookCorner.TOP_LEFT, forms.HookCorner.BOTTOM_LEFT)
     top = corner in (forms.HookCorner.TOP_LEFT, forms.HookCorner.TOP_RIGHT)
+    y = ring.y1 - dia if left else ring.y0 + dia
     z = ring.z1 - dia if top else ring.z0 + dia
-    return any(hypot(by - y, bz - z) <= (bd / 2 + bend) * 1.5 for by, bz, bd in bars)
+    return hypot(bar[0] - y, bar[1] - z) <= (bar[2] / 2 + bend) * 1.5

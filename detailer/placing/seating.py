@@ -11,6 +11,7 @@ from detailer.placing.demand import Demand, area
 from detailer.placing.extents import Around, Extent, span_extent, support_extent
 from detailer.placing.frame import Frame, common, frame_of
 from detailer.placing.lanes import Seat, Spacing, seat_extras, seat_primary
+from detailer.placing.links import hooks_meet
 from detailer.placing.runs import Run, runs_of
 from detailer.placing.strand import Strand
 from detailer.rules import is456, is2502
@@ -82,24 +83,60 @@ def seat_all(project: Project, beam: Beam, demand: Demand | None) -> tuple[tuple
     """
     spacer = spacer_dia(project, beam)
     seated = _seated(project, beam, demand, spacer)
-    layered = {s.run.face for s in seated for seat in s.seats if seat.layer > 1}
+    if len({s.run.face for s in seated for seat in s.seats if seat.layer > 1}) < 2:
+        return seated, spacer
     wider = spacer_dia(project, beam, past_hooks=True)
-    if len(layered) > 1 and wider > spacer:
-        return _seated(project, beam, demand, wider), wider
-    return seated, spacer
+    tries = [(seated, spacer)]
+    for size in sorted({spacer, wider}):
+        for last in (Face.TOP, Face.BOTTOM, None):
+            if _hooks_meet(project, beam, tries[-1][0]) <= 0:
+                return tries[-1]
+            tries.append((_seated(project, beam, demand, size, corners_last=last), size))
+    return min(tries, key=lambda t: _hooks_meet(project, beam, t[0]))
 
 
-def _seated(project: Project, beam: Beam, demand: Demand | None, spacer: int) -> tuple[Seated, ...]:
+def _hooks_meet(project: Project, beam: Beam, seated: tuple[Seated, ...]) -> float:
+    """Return how deep the tails of links cut into the seated bars, at the worst place. [mm]"""
+    worst = 0.0
+    for links in beam.links:
+        span = next(s for s in beam.spans if s.number == links.span)
+        n = beam.spans.index(span)
+        frame = frame_of(beam, span)
+        through = [s for s in seated if s.run.spans is not None and n in _spans_of(beam, s.run)]
+        for support in (span.left, span.right):
+            extras = [s for s in seated if s.run.spans is None and s.run.support == support]
+            bars = tuple(
+                (seat.y, s.frame.level(s.run.face, seat.depth), float(seat.dia))
+                for s in (*through, *extras)
+                for seat in s.seats
+            )
+            zone = max(links.zones, key=lambda z: z.dia)
+            worst = max(worst, hooks_meet(frame, zone, bars))
+    return worst
+
+
+def _seated(
+    project: Project,
+    beam: Beam,
+    demand: Demand | None,
+    spacer: int,
+    *,
+    corners_last: Face | None = None,
+) -> tuple[Seated, ...]:
     """Return the runs with their places and extents, layers held apart by a spacer."""
     runs = [run for run in runs_of(beam) if run.face in (Face.TOP, Face.BOTTOM)]
     done: list[Seated] = []
-    spacing = Spacing(aggregate=project.concrete.aggregate, layer_gap=float(spacer))
     order = sorted(
         range(len(runs)), key=lambda i: (runs[i].face is Face.BOTTOM, not runs[i].primary, i)
     )
     for index in order:
         run = runs[index]
         frame = common([frame_of(beam, beam.spans[n]) for n in _spans_of(beam, run)])
+        spacing = Spacing(
+            aggregate=project.concrete.aggregate,
+            layer_gap=float(spacer),
+            corners_last=run.face is corners_last,
+        )
         among = [s for s in done if s.run.face is run.face and _meet(beam, s.run, run)]
         if run.primary:
             seats = seat_primary(frame, run.dias, run.chosen.layer, spacing)
